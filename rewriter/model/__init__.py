@@ -1,0 +1,1 @@
+"""The words of stillclock as frozen types; standard library only."""

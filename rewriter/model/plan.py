@@ -1,0 +1,224 @@
+"""Registers, proposals, banks, cells and the plan."""
+
+from collections.abc import Mapping
+from dataclasses import dataclass
+from enum import Enum
+from typing import Protocol
+
+from rewriter.model.design import Design, Edge, Module
+from rewriter.model.reasons import Reason, Verdict
+from rewriter.model.source import Span
+from rewriter.model.wake import WakeCondition
+
+
+@dataclass(frozen=True, order=True)
+class Part:
+    """Some bits of one variable; `variable` is the path in source form, generate indices dropped (`gen.q`)."""
+
+    variable: str
+    msb: int
+    lsb: int
+
+    @property
+    def bits(self) -> int:
+        """Give the width in bits."""
+        return self.msb - self.lsb + 1
+
+
+@dataclass(frozen=True, order=True)
+class BlockId:
+    """Name a clocked block in source text."""
+
+    definition: str
+    span: Span
+
+
+@dataclass(frozen=True, order=True)
+class RegisterId:
+    """Name a register in source text: its block, and the parts that are always written together."""
+
+    block: BlockId
+    parts: tuple[Part, ...]
+
+    @property
+    def name(self) -> str:
+        """Give the first variable's name, without its scope."""
+        return self.parts[0].variable.rsplit(".", 1)[-1]
+
+
+@dataclass(frozen=True)
+class Occurrence:
+    """Where a register stands in the elaborated design: module body, generate scope, instances, width there."""
+
+    module: str
+    scope: str
+    instances: int
+    bits: int
+
+
+@dataclass(frozen=True)
+class Proposal:
+    """One register and its possible wake conditions, most readable first.
+
+    Args:
+        register: the register.
+        method: name of the method.
+        clock: text of the clock as written, and its edge.
+        conditions: possible wake conditions.
+        occurrences: all of them, merged over parameterisations and generate indices.
+        language_ok: reserved for methods that need SystemVerilog.
+        needs: temporaries (variables written with `=` in the block) that a split copy must declare.
+    """
+
+    register: RegisterId
+    method: str
+    clock: str
+    edge: Edge
+    scope: str
+    conditions: tuple[WakeCondition, ...]
+    occurrences: tuple[Occurrence, ...]
+    needs: tuple[str, ...] = ()
+
+    @property
+    def bits(self) -> int:
+        """Give the bits of one occurrence (the widest)."""
+        return max(o.bits for o in self.occurrences)
+
+    @property
+    def total_bits(self) -> int:
+        """Give the bits over all occurrences."""
+        return sum(o.bits * o.instances for o in self.occurrences)
+
+
+@dataclass(frozen=True)
+class Refusal:
+    """A register that is left or refused; `holds` says whether it was seen to hold."""
+
+    register: RegisterId
+    verdict: Verdict
+    reason: Reason
+    occurrences: tuple[Occurrence, ...]
+    holds: bool
+
+    @property
+    def total_bits(self) -> int:
+        """Give the bits over all occurrences."""
+        return sum(o.bits * o.instances for o in self.occurrences)
+
+
+Outcome = Proposal | Refusal
+
+
+class Method(Protocol):
+    """Find registers of one kind."""
+
+    name: str
+
+    def propose(self, module: Module, design: Design) -> tuple[Outcome, ...]:
+        """Give an outcome for every register of the module body that this method understands."""
+        ...
+
+
+@dataclass(frozen=True)
+class Settled:
+    """Every register once, with its first wake condition that stands.
+
+    Args:
+        proposals: one per register; `conditions[0]` is the one chosen.
+        refusals: the others.
+        equal: classes of wake keys that are proved equal though written differently (for the report).
+        depth: logic levels by wake key, when an engine ran.
+    """
+
+    proposals: tuple[Proposal, ...]
+    refusals: tuple[Refusal, ...]
+    equal: tuple[tuple[str, ...], ...] = ()
+    depth: Mapping[str, int] | None = None
+
+
+@dataclass(frozen=True)
+class Policy:
+    """What is worth a cell. `min_bits`: fewest bits per cell in one occurrence of its scope."""
+
+    min_bits: int = 4
+    has_falling_cell: bool = True
+
+
+class Shape(Enum):
+    """How a block is rewritten; rendered by `edit` alone."""
+
+    KEEP = "keep"
+    SPLIT = "split"
+    WORDS = "words"
+    SLICE = "slice"
+    EXPAND = "expand"
+    CONNECTION = "connection"
+
+
+@dataclass(frozen=True)
+class ClockRef:
+    """A clock as written in the source."""
+
+    text: str
+
+
+@dataclass(frozen=True)
+class CellRef:
+    """The output of another cell of the plan (cells can nest)."""
+
+    cell: str
+
+
+@dataclass(frozen=True)
+class Cell:
+    """One gating cell in source text.
+
+    Args:
+        id: unique and stable: `definition:name`.
+        name: from the bank's first register; edit derives `wake_…`, `gclk_…`, `u_icg_…` and avoids collisions.
+        definition, scope: where it stands (`scope` in source form, generate indices dropped).
+        clock: a source clock or another cell.
+        wake: its condition.
+        blocks: blocks it serves, in source order; it stands before the first.
+    """
+
+    id: str
+    name: str
+    definition: str
+    scope: str
+    clock: ClockRef | CellRef
+    edge: Edge
+    wake: WakeCondition
+    blocks: tuple[BlockId, ...]
+
+
+@dataclass(frozen=True)
+class Bank:
+    """Registers of one block on one cell (several banks may share the cell)."""
+
+    name: str
+    cell: str
+    block: BlockId
+    registers: tuple[RegisterId, ...]
+    proposals: tuple[Proposal, ...]
+    method: str
+
+
+@dataclass(frozen=True)
+class BlockPlan:
+    """How one block is rewritten: its banks, and the registers that stay on the original clock (None: none)."""
+
+    block: BlockId
+    shape: Shape
+    banks: tuple[str, ...]
+    rest: tuple[RegisterId, ...]
+
+
+@dataclass(frozen=True)
+class Plan:
+    """What is done. Every register is in exactly one bank, or in `refusals`."""
+
+    cells: tuple[Cell, ...]
+    banks: tuple[Bank, ...]
+    blocks: tuple[BlockPlan, ...]
+    refusals: tuple[Refusal, ...]
