@@ -1,8 +1,11 @@
 """The files that ship with the program: templates and simulation sources."""
 
+from functools import cache
 from importlib.resources import files
 from importlib.resources.abc import Traversable
 from pathlib import Path
+
+from jinja2 import Environment, FunctionLoader, StrictUndefined
 
 _CHECKOUT = Path(__file__).resolve().parent.parent
 
@@ -25,6 +28,28 @@ def read(folder: Traversable, *parts: str) -> str:
         parts: the path below it, one name each.
     """
     return folder.joinpath(*parts).read_text(encoding="utf-8")
+
+
+def render(name: str, **values: object) -> str:
+    """Fill in a whole-file template.
+
+    Args:
+        name: path below the templates folder, such as `cells/wrapper.v.j2`.
+        values: everything the template names; a missing one is an error of ours.
+    """
+    return _environment().get_template(name).render(values)
+
+
+@cache
+def _environment() -> Environment:
+    return Environment(
+        loader=FunctionLoader(lambda name: read(templates(), *name.split("/"))),
+        undefined=StrictUndefined,
+        trim_blocks=True,
+        lstrip_blocks=True,
+        keep_trailing_newline=True,
+        autoescape=False,  # noqa: S701 (the templates make RTL and plain text, no markup)
+    )
 
 
 def _shipped(name: str) -> Traversable:

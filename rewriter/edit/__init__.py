@@ -1,0 +1,1 @@
+"""Edit the sources: cells, conditions, ports, and the byte ranges they replace."""
