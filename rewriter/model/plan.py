@@ -13,16 +13,26 @@ from rewriter.model.wake import WakeCondition
 
 @dataclass(frozen=True, order=True)
 class Part:
-    """Some bits of one variable; `variable` is the path in source form, generate indices dropped (`gen.q`)."""
+    """Some bits of one variable; `variable` is the path in source form, generate indices dropped (`gen.q`).
+
+    The whole variable, however wide a parameter makes it, has msb = lsb = -1; widths stand in Occurrence.
+    """
 
     variable: str
-    msb: int
-    lsb: int
+    msb: int = -1
+    lsb: int = -1
 
     @property
-    def bits(self) -> int:
-        """Give the width in bits."""
-        return self.msb - self.lsb + 1
+    def whole(self) -> bool:
+        """Say whether this is the whole variable."""
+        return self.msb < 0
+
+    @property
+    def text(self) -> str:
+        """Format for reports: `gen.q` or `gen.q[7:0]`."""
+        if self.whole:
+            return self.variable
+        return f"{self.variable}[{self.msb}]" if self.msb == self.lsb else f"{self.variable}[{self.msb}:{self.lsb}]"
 
 
 @dataclass(frozen=True, order=True)
@@ -56,6 +66,14 @@ class Occurrence:
     bits: int
 
 
+class Liveness(Enum):
+    """Say how often a condition is true under the parameters of one body, as far as constants tell."""
+
+    ALWAYS = "always"
+    SOMETIMES = "sometimes"
+    NEVER = "never"
+
+
 @dataclass(frozen=True)
 class Proposal:
     """One register and its possible wake conditions, most readable first.
@@ -66,8 +84,8 @@ class Proposal:
         clock: text of the clock as written, and its edge.
         conditions: possible wake conditions.
         occurrences: all of them, merged over parameterisations and generate indices.
-        language_ok: reserved for methods that need SystemVerilog.
-        needs: temporaries (variables written with `=` in the block) that a split copy must declare.
+        liveness: of the first condition, over all occurrences.
+        needs: module-level temporaries (variables written with `=` in the block) that a split copy must declare.
     """
 
     register: RegisterId
@@ -77,6 +95,7 @@ class Proposal:
     scope: str
     conditions: tuple[WakeCondition, ...]
     occurrences: tuple[Occurrence, ...]
+    liveness: Liveness = Liveness.SOMETIMES
     needs: tuple[str, ...] = ()
 
     @property
@@ -106,7 +125,14 @@ class Refusal:
         return sum(o.bits * o.instances for o in self.occurrences)
 
 
-Outcome = Proposal | Refusal
+@dataclass(frozen=True)
+class Anchor:
+    """Say that a block must keep a part on its original clock (see Settled)."""
+
+    block: BlockId
+
+
+Outcome = Proposal | Refusal | Anchor
 
 
 class Method(Protocol):
@@ -123,6 +149,9 @@ class Method(Protocol):
 class Settled:
     """Every register once, with its first wake condition that stands.
 
+    A block in `anchored` does more than write registers (temporaries that others may read, harmless
+    statements): that part must stay on the original clock, so the block cannot keep its text.
+
     Args:
         proposals: one per register; `conditions[0]` is the one chosen.
         refusals: the others.
@@ -132,6 +161,7 @@ class Settled:
 
     proposals: tuple[Proposal, ...]
     refusals: tuple[Refusal, ...]
+    anchored: frozenset[BlockId] = frozenset()
     equal: tuple[tuple[str, ...], ...] = ()
     depth: Mapping[str, int] | None = None
 
