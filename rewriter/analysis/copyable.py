@@ -1,0 +1,53 @@
+"""What may stand as text beside the block it was written in."""
+
+from rewriter.model.expr import Call, Constant, Expr, Opaque, Reference
+
+# Functions of IEEE 1800 clause 20 that depend on nothing but their arguments.
+_PURE_SYSTEM_FUNCTIONS = frozenset(
+    ("$signed", "$unsigned", "$clog2", "$bits", "$countones", "$countbits", "$onehot", "$onehot0", "$size", "$left", "$right", "$high", "$low")
+)
+
+
+class CannotCopyError(Exception):
+    """A condition cannot stand as text elsewhere; `word` is the reason, `expr` the condition (or None)."""
+
+    def __init__(self, word: str, expr: Expr | None = None) -> None:
+        super().__init__(word)
+        self.word = word
+        self.expr = expr
+
+
+def check_condition(expr: Expr, *, wildcards: bool = False) -> None:
+    """Refuse a condition whose text must not be copied beside the block.
+
+    Args:
+        expr: a condition, case selector or case label.
+        wildcards: x and z are wildcards here (labels of casez, casex and `inside`).
+
+    Raises:
+        CannotCopyError: `not-copyable`, `x-in-wake`, `hierarchical-name`, `impure-call`, `hidden-read`.
+    """
+    if not expr.copyable or (expr.width == 0 and not wildcards):
+        raise CannotCopyError("not-copyable", expr)
+    for node in expr.walk():
+        word = _obstacle(node, wildcards=wildcards)
+        if word:
+            raise CannotCopyError(word, expr)
+
+
+def _obstacle(node: Expr, *, wildcards: bool) -> str:
+    match node:
+        case Opaque():
+            return "not-copyable"
+        case Constant(has_x=True):
+            return "" if wildcards else "x-in-wake"
+        case Reference(is_hierarchical=True):
+            return "hierarchical-name"
+        case Call(system=True):
+            return "" if node.function in _PURE_SYSTEM_FUNCTIONS else "impure-call"
+        case Call(pure=False):
+            return "impure-call"
+        case Call():
+            return "hidden-read" if node.hidden_reads else ""
+        case _:
+            return ""

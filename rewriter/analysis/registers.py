@@ -1,0 +1,136 @@
+"""Registers of a clocked block: the bits that are always written together."""
+
+from collections.abc import Iterable, Iterator
+from dataclasses import dataclass
+from functools import cached_property
+
+import networkx as nx
+
+from rewriter.model.design import ClockedBlock, Module
+from rewriter.model.plan import Part
+from rewriter.model.source import Span
+from rewriter.model.statement import Assign, Index, Opaque, Target
+
+
+@dataclass(frozen=True)
+class Group:
+    """Registers that one assignment or another ties together.
+
+    Args:
+        ranges: variable path -> (msb, lsb) pairs, disjoint and sorted.
+        parts: the same in source form, for RegisterId.
+        assigns: every non-blocking assignment to them, in source order, reset branches included.
+        bits: width in this body.
+        array: a word of an array is selected by a variable index.
+    """
+
+    ranges: tuple[tuple[str, tuple[int, int]], ...]
+    parts: tuple[Part, ...]
+    assigns: tuple[Assign, ...]
+    bits: int
+    array: bool
+
+    @cached_property
+    def spans(self) -> frozenset[Span]:
+        """Give the places of the assignments."""
+        return frozenset(a.span for a in self.assigns)
+
+    @property
+    def variables(self) -> frozenset[str]:
+        """Give the paths of the variables."""
+        return frozenset(name for name, _ in self.ranges)
+
+    def writes(self, statement: Assign) -> bool:
+        """Say whether the assignment writes this group."""
+        return statement.span in self.spans and not statement.blocking
+
+
+def source_form(path: str, scope: str) -> str:
+    """Drop the generate indices of a path, for names that all copies of a block share.
+
+    Only indices of the block's own generate scope and of its parents are dropped.
+    """
+    scopes = [scope[: i + 1] for i, c in enumerate(scope) if c == "."]
+    for prefix in reversed(scopes):
+        if path.startswith(prefix):
+            return plain_scope(prefix) + path[len(prefix) :]
+    return path
+
+
+def plain_scope(scope: str) -> str:
+    """Give a scope without generate indices: `gen[2].` becomes `gen.`."""
+    return ".".join(piece.split("[", 1)[0] for piece in scope.split("."))
+
+
+def groups(block: ClockedBlock, module: Module) -> tuple[Group, ...]:
+    """Partition everything the block writes with `<=` into registers, in order of first writing."""
+    assigns = [s for s in block.body.walk() if isinstance(s, Assign) and not s.blocking]
+    graph: nx.Graph[tuple[str, tuple[int, int]]] = nx.Graph()
+    for ranges in _tied(block, assigns):
+        nx.add_path(graph, ranges)
+        graph.add_nodes_from(ranges)
+    _tie_overlaps(graph)
+    found = [_group(block, module, component, assigns) for component in nx.connected_components(graph)]
+    return tuple(sorted(found, key=lambda g: g.assigns[0].span.start if g.assigns else block.span.end))
+
+
+def _tied(block: ClockedBlock, assigns: Iterable[Assign]) -> Iterator[list[tuple[str, tuple[int, int]]]]:
+    for statement in assigns:
+        yield [(t.variable, t.bits) for t in statement.targets]
+    for statement in block.body.walk():
+        if isinstance(statement, Opaque):
+            for target in statement.writes:
+                yield [(target.variable, target.bits)]
+
+
+def _tie_overlaps(graph: "nx.Graph[tuple[str, tuple[int, int]]]") -> None:
+    """Connect ranges of one variable that overlap."""
+    last: dict[str, tuple[str, tuple[int, int]]] = {}
+    for node in sorted(graph.nodes, key=lambda n: (n[0], n[1][1], n[1][0])):
+        name, (msb, lsb) = node
+        previous = last.get(name)
+        if previous and previous[1][0] >= lsb:
+            graph.add_edge(previous, node)
+        if not previous or msb > previous[1][0]:
+            last[name] = node
+
+
+def _group(
+    block: ClockedBlock, module: Module, nodes: set[tuple[str, tuple[int, int]]], assigns: list[Assign]
+) -> Group:
+    ranges = tuple(sorted(_merged(nodes)))
+    names = {name for name, _ in nodes}
+    mine = tuple(a for a in assigns if any((t.variable, t.bits) in nodes for t in a.targets))
+    first = {t.variable: a.span.start for a in reversed(mine) for t in a.targets if t.variable in names}
+    ordered = sorted(ranges, key=lambda r: (first.get(r[0], 0), r[0], -r[1][0]))
+    parts = tuple(_part(block, module, name, bits) for name, bits in ordered)
+    written = [t for a in mine for t in a.targets if t.variable in names]
+    return Group(
+        ranges=tuple(ordered),
+        parts=parts,
+        assigns=mine,
+        bits=sum(msb - lsb + 1 for _, (msb, lsb) in ranges),
+        array=any(_variable_word(t) for t in written),
+    )
+
+
+def _variable_word(target: Target) -> bool:
+    return target.unpacked and target.index is Index.VARIABLE
+
+
+def _merged(nodes: Iterable[tuple[str, tuple[int, int]]]) -> list[tuple[str, tuple[int, int]]]:
+    merged: list[tuple[str, tuple[int, int]]] = []
+    for name, (msb, lsb) in sorted(nodes, key=lambda n: (n[0], n[1][1])):
+        if merged and merged[-1][0] == name and merged[-1][1][0] >= lsb:
+            merged[-1] = (name, (max(msb, merged[-1][1][0]), merged[-1][1][1]))
+        else:
+            merged.append((name, (msb, lsb)))
+    return merged
+
+
+def _part(block: ClockedBlock, module: Module, name: str, bits: tuple[int, int]) -> Part:
+    variable = module.variables.get(name)
+    source = source_form(name, block.scope)
+    if variable is None or bits == (variable.width - 1, 0):
+        return Part(source)
+    return Part(source, *bits)
