@@ -1,0 +1,126 @@
+"""Rule 10: what makes a register unfit for a gated clock, as far as source and model tell."""
+
+from collections.abc import Iterator
+from dataclasses import dataclass
+
+from rewriter.analysis import regions
+from rewriter.analysis.branches import around, control_reads
+from rewriter.analysis.registers import Group
+from rewriter.analysis.temporaries import Temporaries, loop_names
+from rewriter.model.design import AsyncReset, ClockedBlock, Definition, Design, Module, WriterKind
+from rewriter.model.errors import Place
+from rewriter.model.expr import Call
+from rewriter.model.expr import Opaque as OpaqueExpr
+from rewriter.model.reasons import Reason
+from rewriter.model.source import Span
+from rewriter.model.statement import Assign, Opaque
+
+# Names of attributes that tools read as "do not move this register"; common practice, no source.
+_KEEP = frozenset(
+    ("keep", "async_reg", "dont_touch", "preserve", "syn_keep", "syn_preserve", "noprune", "no_clock_gating", "shreg_extract")
+)
+
+
+@dataclass(frozen=True)
+class Context:
+    """What the checks look at, for one block."""
+
+    design: Design
+    definition: Definition
+    module: Module
+    block: ClockedBlock
+    temporaries: Temporaries
+
+    def place(self, span: Span) -> str:
+        """Format a span as `file:line:col`."""
+        source = self.design.source.by_path.get(span.file)
+        if source is None:
+            return span.file
+        place = Place.of(source, span)
+        return f"{place.file}:{place.line}:{place.column}"
+
+    def reason(self, word: str, span: Span, detail: str = "") -> Reason:
+        """Make a reason with its place."""
+        return Reason(word, detail, self.place(span))
+
+
+def of_block(context: Context) -> Reason | None:
+    """Give the reason that refuses every register of the block, if there is one."""
+    block, definition = context.block, context.definition
+    for trap in (*((definition.trap,) if definition.trap else ()), *block.traps):
+        return context.reason(trap.reason, trap.span, trap.detail)
+    for statement in block.body.walk():
+        if isinstance(statement, Opaque) and not statement.harmless:
+            return context.reason("side-effect", statement.span, statement.what)
+    source = context.design.source.by_path[block.span.file]
+    if regions.writes_conditionally(block, source):
+        return context.reason("inactive-code", block.span)
+    if block.label and any(n == block.label or n.startswith(f"{block.label}.") for n in context.module.external_references):
+        return context.reason("labelled-block", block.span, block.label)
+    return None
+
+
+def of_group(context: Context, group: Group) -> Reason | None:
+    """Give the reason that refuses one register, if there is one."""
+    return next(_group_traps(context, group), None)
+
+
+def _group_traps(context: Context, group: Group) -> Iterator[Reason]:
+    block, module = context.block, context.module
+    where = group.assigns[0].span if group.assigns else block.span
+    mixed = group.variables & context.temporaries.names
+    if mixed:
+        yield context.reason("blocking-source", where, f"{_names(mixed)} is written with both = and <=")
+    yield from _other_writers(context, group, where)
+    for name in group.variables & module.drives_clocks.keys():
+        yield context.reason("drives-clock", module.drives_clocks[name], _last(name))
+    for name in sorted(group.variables & module.variables.keys()):
+        kept = _KEEP & {attribute.lower() for attribute in module.variables[name].attributes}
+        if kept:
+            yield context.reason("keep-attribute", module.variables[name].span, f"{_last(name)}: {', '.join(sorted(kept))}")
+    for reset in block.resets:
+        load = _changing_load(reset, group)
+        if load:
+            yield context.reason("async-load", load, ", ".join(part.text for part in group.parts))
+    outside = sorted(n for n in group.variables if n not in module.variables and module.variables)
+    if outside:
+        yield context.reason("hierarchical-name", where, _names(frozenset(outside)))
+    for statement in group.assigns:
+        for node in statement.rhs.walk():
+            if (isinstance(node, Call) and not node.pure) or (isinstance(node, OpaqueExpr) and "++" in node.kind):
+                yield context.reason("impure-call", statement.span)
+
+
+def _other_writers(context: Context, group: Group, where: Span) -> Iterator[Reason]:
+    for name, (msb, lsb) in group.ranges:
+        for writer in context.module.writers.get(name, ()):
+            overlaps = writer.bits[0] >= lsb and writer.bits[1] <= msb
+            mine = context.block.span.covers(writer.span)
+            if overlaps and not mine and writer.kind is not WriterKind.INITIAL:
+                detail = f"{_last(name)} is also written at {context.place(writer.span)} ({writer.kind.value})"
+                yield context.reason("two-writers", where, detail)
+
+
+def _changing_load(reset: AsyncReset, group: Group) -> Span | None:
+    """Find a write in a reset branch whose value, place or condition is not constant."""
+    loops = loop_names(reset.branch)
+    kept = around(reset.branch, group.writes)
+    if control_reads(kept) - loops:
+        return reset.branch.span
+    for statement in kept:
+        if not isinstance(statement, Assign):
+            continue
+        indices = [index for target in statement.targets for index in target.indices]
+        for expr in (statement.rhs, *indices):
+            changing = expr.reads() - loops or any(isinstance(n, OpaqueExpr | Call) and expr.constant is None for n in expr.walk())
+            if changing:
+                return statement.span
+    return None
+
+
+def _names(names: frozenset[str]) -> str:
+    return ", ".join(sorted(_last(name) for name in names))
+
+
+def _last(name: str) -> str:
+    return name.rsplit(".", 1)[-1]
