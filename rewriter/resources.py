@@ -30,6 +30,12 @@ def read(folder: Traversable, *parts: str) -> str:
     return folder.joinpath(*parts).read_text(encoding="utf-8")
 
 
+def cell_model(module: str) -> str | None:
+    """Give the functional model of a library's cell, if one ships."""
+    file = sim().joinpath("cell_models", f"{module}.v")
+    return file.read_text(encoding="utf-8") if file.is_file() else None
+
+
 def render(name: str, **values: object) -> str:
     """Fill in a whole-file template.
 

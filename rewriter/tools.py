@@ -1,6 +1,8 @@
 """Outside programs: find them, run them within a time limit, and say what to do when one is missing."""
 
+import os
 import shutil
+import signal
 import subprocess
 from collections.abc import Mapping, Sequence
 from dataclasses import dataclass
@@ -63,7 +65,12 @@ def find(program: str) -> str:
 
 
 def run(
-    program: str, arguments: Sequence[str], *, folder: Path, seconds: float, environment: Mapping[str, str] | None = None
+    program: str,
+    arguments: Sequence[str],
+    *,
+    folder: Path,
+    seconds: float,
+    environment: Mapping[str, str] | None = None,
 ) -> Ran:
     """Run a program to its end, whatever its exit status.
 
@@ -78,18 +85,22 @@ def run(
         MissingProgramError: the program is not installed.
         TimeLimitError: the limit was reached.
     """
-    try:
-        ended = subprocess.run(
-            [find(program), *arguments],
-            cwd=folder,
-            env=environment,
-            timeout=seconds,
-            check=False,
-            stdin=subprocess.DEVNULL,
-            capture_output=True,
-            encoding="utf-8",
-            errors="replace",
-        )
-    except subprocess.TimeoutExpired as error:
-        raise TimeLimitError(program, seconds) from error
-    return Ran(ended.returncode, ended.stdout, ended.stderr)
+    with subprocess.Popen(
+        [find(program), *arguments],
+        cwd=folder,
+        env=environment,
+        stdin=subprocess.DEVNULL,
+        stdout=subprocess.PIPE,
+        stderr=subprocess.PIPE,
+        encoding="utf-8",
+        errors="replace",
+        start_new_session=True,  # so that what the program started ends with it
+    ) as process:
+        try:
+            stdout, stderr = process.communicate(timeout=seconds)
+        except subprocess.TimeoutExpired:
+            raise TimeLimitError(program, seconds) from None
+        finally:
+            if process.poll() is None:
+                os.killpg(process.pid, signal.SIGKILL)
+    return Ran(process.wait(), stdout, stderr)

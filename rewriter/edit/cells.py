@@ -34,8 +34,8 @@ def load_cell_map(name_or_path: str) -> CellMap:
     """
     if name_or_path in shipped_maps():
         text = resources.read(resources.templates(), "maps", f"{name_or_path}.toml")
-        return _Reader(f"{name_or_path}.toml", text, shipped=True).cell_map(name_or_path)
-    return _Reader(name_or_path, _read_file(name_or_path), shipped=False).cell_map(name_or_path)
+        return _Reader(f"{name_or_path}.toml", text).cell_map(name_or_path)
+    return _Reader(name_or_path, _read_file(name_or_path)).cell_map(name_or_path)
 
 
 def render_cells(cell_map: CellMap, timescale: str | None) -> dict[str, str]:
@@ -66,15 +66,15 @@ def _render(cell_map: CellMap, edge: Edge, timescale: str | None) -> str:
 
 
 def _read_file(path: str) -> str:
-    try:
-        return Path(path).read_text(encoding="utf-8")
-    except FileNotFoundError:
-        names = ", ".join(shipped_maps())
+    if not path or not Path(path).exists():
         near = difflib.get_close_matches(path, shipped_maps(), 1)
         guess = f"did you mean `{near[0]}`? " if near else ""
+        names = ", ".join(shipped_maps())
         raise UserError(
             f"there is no cell map `{path}`", help=f"{guess}give the path of a TOML file, or one of {names}"
-        ) from None
+        )
+    try:
+        return Path(path).read_text(encoding="utf-8")
     except UnicodeDecodeError:
         raise UserError(f"{path}: not a text file", help="a cell map is a TOML file in UTF-8") from None
     except OSError as error:
@@ -87,13 +87,10 @@ class _Reader:
 
     path: str
     text: str
-    shipped: bool
 
     def cell_map(self, name: str) -> CellMap:
         data = self._parse()
-        self._known(
-            data, "", ("format", "description", "kind", "rising", "falling", *(("model",) if self.shipped else ()))
-        )
+        self._known(data, "", ("format", "description", "kind", "rising", "falling"))
         if (found := self._string(data, "", "format")) != FORMAT:
             self._fail("format", f"cell map format `{found}` is not known", f'this version reads format = "{FORMAT}"')
         kind = self._kind(data)
@@ -110,7 +107,6 @@ class _Reader:
             kind=kind,
             rising=cells.get("rising"),
             falling=cells.get("falling"),
-            model=self._string(data, "", "model") if "model" in data else "",
         )
 
     def _parse(self) -> Mapping[str, object]:

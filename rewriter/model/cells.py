@@ -64,7 +64,6 @@ class CellMap:
         kind: as said.
         rising: the cell for rising-edge banks, given exactly when `kind` is LIBRARY and the library has one.
         falling: the same for falling-edge banks.
-        model: shipped functional model of the cells (a file name below sim/cell_models), empty without.
     """
 
     name: str
@@ -72,7 +71,6 @@ class CellMap:
     kind: CellKind
     rising: LibraryCell | None = None
     falling: LibraryCell | None = None
-    model: str = ""
 
     def cell(self, edge: Edge) -> LibraryCell | None:
         """Give the library's cell for an edge."""
