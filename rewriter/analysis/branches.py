@@ -2,7 +2,7 @@
 
 from collections.abc import Callable, Iterator
 
-from rewriter.model.expr import Expr
+from rewriter.model.expr import Expr, Reference
 from rewriter.model.statement import Assign, Case, If, Loop, Statement
 
 Wanted = Callable[[Assign], bool]
@@ -55,6 +55,13 @@ def control_reads(statements: tuple[Statement, ...]) -> frozenset[str]:
         if isinstance(statement, Loop):
             reads |= statement.reads
     return reads
+
+
+def local_reads(statements: tuple[Statement, ...]) -> frozenset[str]:
+    """Give the variables declared inside the block that conditions and blocking assignments read."""
+    exprs = [*conditions(statements), *(label for label, _ in labels(statements))]
+    exprs += [s.rhs for s in statements if isinstance(s, Assign) and s.blocking]
+    return frozenset(n.name for e in exprs for n in e.walk() if isinstance(n, Reference) and n.is_local)
 
 
 def value_reads(statement: Assign) -> frozenset[str]:

@@ -1,11 +1,28 @@
 """What may stand as text beside the block it was written in."""
 
-from rewriter.model.expr import Call, Constant, Expr, Opaque, Reference
+from rewriter.model.expr import Call, Constant, Expr, Opaque, Operation, Reference
 
 # Functions of IEEE 1800 clause 20 that depend on nothing but their arguments.
 _PURE_SYSTEM_FUNCTIONS = frozenset(
-    ("$signed", "$unsigned", "$clog2", "$bits", "$countones", "$countbits", "$onehot", "$onehot0", "$size", "$left", "$right", "$high", "$low")
+    (
+        "$signed",
+        "$unsigned",
+        "$clog2",
+        "$bits",
+        "$countones",
+        "$countbits",
+        "$onehot",
+        "$onehot0",
+        "$size",
+        "$left",
+        "$right",
+        "$high",
+        "$low",
+    )
 )
+
+# Operators that write their operand (IEEE 1800-2017, 11.4.1 and 11.4.2).
+ASSIGNING = frozenset(("=", "+=", "-=", "*=", "/=", "%=", "&=", "|=", "^=", "<<=", ">>=", "<<<=", ">>>=", "++", "--"))
 
 
 class CannotCopyError(Exception):
@@ -43,6 +60,8 @@ def _obstacle(node: Expr, *, wildcards: bool) -> str:
             return "" if wildcards else "x-in-wake"
         case Reference(is_hierarchical=True):
             return "hierarchical-name"
+        case Operation(operator=operator) if operator in ASSIGNING:
+            return "impure-call"
         case Call(system=True):
             return "" if node.function in _PURE_SYSTEM_FUNCTIONS else "impure-call"
         case Call(pure=False):

@@ -74,7 +74,9 @@ class Sources:
         self.cones[name] = result
         return result
 
-    def trap(self, block: ClockedBlock, wake_reads: frozenset[str], value_names: frozenset[str], own: frozenset[str]) -> tuple[str, str] | None:
+    def trap(
+        self, block: ClockedBlock, wake_reads: frozenset[str], value_names: frozenset[str], own: frozenset[str]
+    ) -> tuple[str, str] | None:
         """Give reason word and detail when a bank must not sleep on these sources.
 
         Args:
@@ -94,7 +96,10 @@ class Sources:
                 if launch.clock != clock:
                     return "foreign-domain", f"{name} runs on {launch.clock}, the bank on {clock}"
                 if resets and launch.resets - resets:
-                    return "foreign-reset", f"{name} is reset by {', '.join(sorted(launch.resets))}, the bank by {', '.join(sorted(resets))}"
+                    return (
+                        "foreign-reset",
+                        f"{name} is reset by {', '.join(sorted(launch.resets))}, the bank by {', '.join(sorted(resets))}",
+                    )
         for name in sorted(self.leaves(value_names - own)):
             if any(launch.blocking for launch in self.launches.get(name, ())):
                 return "blocking-source", f"{name} is written with ="
@@ -121,5 +126,3 @@ def _reads(driver: Driver) -> frozenset[str]:
             return reads
         case _:
             return frozenset()
-
-

@@ -46,7 +46,9 @@ def _harmless(region: bytes) -> bool:
     if _ASSIGNMENT.search(region):
         return False
     words = [m.group(1) for m in _CONTROL.finditer(region)]
-    if any(word.startswith(b"case") or word in (b"endcase", b"disable", b"return", b"break", b"continue") for word in words):
+    if any(
+        word.startswith(b"case") or word in (b"endcase", b"disable", b"return", b"break", b"continue") for word in words
+    ):
         return False
     whole = region.strip()
     balanced = words.count(b"begin") == words.count(b"end")

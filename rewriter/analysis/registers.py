@@ -3,6 +3,7 @@
 from collections.abc import Iterable, Iterator
 from dataclasses import dataclass
 from functools import cached_property
+from itertools import pairwise
 
 import networkx as nx
 
@@ -67,8 +68,8 @@ def groups(block: ClockedBlock, module: Module) -> tuple[Group, ...]:
     assigns = [s for s in block.body.walk() if isinstance(s, Assign) and not s.blocking]
     graph: nx.Graph[tuple[str, tuple[int, int]]] = nx.Graph()
     for ranges in _tied(block, assigns):
-        nx.add_path(graph, ranges)
         graph.add_nodes_from(ranges)
+        graph.add_edges_from(pairwise(ranges))
     _tie_overlaps(graph)
     found = [_group(block, module, component, assigns) for component in nx.connected_components(graph)]
     return tuple(sorted(found, key=lambda g: g.assigns[0].span.start if g.assigns else block.span.end))

@@ -108,12 +108,12 @@ class _Walker:
 
     def case(self, statement: Case, written: frozenset[str]) -> frozenset[str]:
         labels: list[Expr] = [label for item in statement.items for label in item.labels]
-        self.read(frozenset().union(statement.selector.reads(), *(e.reads() for e in labels)), written)
+        self.read(frozenset[str]().union(statement.selector.reads(), *(e.reads() for e in labels)), written)
         after = [self.statement(item.body, written) for item in statement.items]
         if not any(item.is_default for item in statement.items):
             after.append(written)
-        return frozenset.intersection(*after) if after else written
+        return after[0].intersection(*after[1:]) if after else written
 
 
 def _index_reads(target: Target) -> frozenset[str]:
-    return frozenset().union(*(index.reads() for index in target.indices))
+    return frozenset[str]().union(*(index.reads() for index in target.indices))

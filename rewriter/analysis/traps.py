@@ -5,11 +5,12 @@ from dataclasses import dataclass
 
 from rewriter.analysis import regions
 from rewriter.analysis.branches import around, control_reads
+from rewriter.analysis.copyable import ASSIGNING
 from rewriter.analysis.registers import Group
 from rewriter.analysis.temporaries import Temporaries, loop_names
 from rewriter.model.design import AsyncReset, ClockedBlock, Definition, Design, Module, WriterKind
 from rewriter.model.errors import Place
-from rewriter.model.expr import Call
+from rewriter.model.expr import Call, Operation, Reference, Select
 from rewriter.model.expr import Opaque as OpaqueExpr
 from rewriter.model.reasons import Reason
 from rewriter.model.source import Span
@@ -17,7 +18,17 @@ from rewriter.model.statement import Assign, Opaque
 
 # Names of attributes that tools read as "do not move this register"; common practice, no source.
 _KEEP = frozenset(
-    ("keep", "async_reg", "dont_touch", "preserve", "syn_keep", "syn_preserve", "noprune", "no_clock_gating", "shreg_extract")
+    (
+        "keep",
+        "async_reg",
+        "dont_touch",
+        "preserve",
+        "syn_keep",
+        "syn_preserve",
+        "noprune",
+        "no_clock_gating",
+        "shreg_extract",
+    )
 )
 
 
@@ -30,6 +41,7 @@ class Context:
     module: Module
     block: ClockedBlock
     temporaries: Temporaries
+    clocked: frozenset[str] = frozenset()  # every variable that a clocked block of the body writes
 
     def place(self, span: Span) -> str:
         """Format a span as `file:line:col`."""
@@ -49,14 +61,38 @@ def of_block(context: Context) -> Reason | None:
     block, definition = context.block, context.definition
     for trap in (*((definition.trap,) if definition.trap else ()), *block.traps):
         return context.reason(trap.reason, trap.span, trap.detail)
+    if definition.is_interface:
+        return context.reason("no-test-path", definition.span, "interfaces are not edited")
+    clock = _clock_trap(context)
+    if clock is not None:
+        return clock
     for statement in block.body.walk():
         if isinstance(statement, Opaque) and not statement.harmless:
             return context.reason("side-effect", statement.span, statement.what)
     source = context.design.source.by_path[block.span.file]
     if regions.writes_conditionally(block, source):
         return context.reason("inactive-code", block.span)
-    if block.label and any(n == block.label or n.startswith(f"{block.label}.") for n in context.module.external_references):
+    if block.label and any(
+        n == block.label or n.startswith(f"{block.label}.") for n in context.module.external_references
+    ):
         return context.reason("labelled-block", block.span, block.label)
+    return None
+
+
+def _clock_trap(context: Context) -> Reason | None:
+    """Refuse clocks whose text cannot stand on a cell, or that a register makes (they race in simulation)."""
+    event = context.block.clock
+    if event is None:
+        return context.reason("clock-unclear", context.block.span)
+    signal = event.signal
+    plain = isinstance(signal, Reference) or (isinstance(signal, Select) and signal.bits is not None)
+    if not plain or signal.width != 1 or not signal.copyable:
+        return context.reason("clock-unclear", signal.span, "the clock is not a single signal")
+    if any(isinstance(node, Reference) and node.is_hierarchical for node in signal.walk()):
+        return context.reason("hierarchical-name", signal.span, signal.key)
+    made = signal.reads() & context.clocked
+    if made:
+        return context.reason("foreign-domain", signal.span, f"the clock {_names(made)} is made by a register")
     return None
 
 
@@ -68,6 +104,8 @@ def of_group(context: Context, group: Group) -> Reason | None:
 def _group_traps(context: Context, group: Group) -> Iterator[Reason]:
     block, module = context.block, context.module
     where = group.assigns[0].span if group.assigns else block.span
+    if any(target.is_local for statement in group.assigns for target in statement.targets):
+        yield context.reason("not-copyable", where, "the register is declared inside its block")
     mixed = group.variables & context.temporaries.names
     if mixed:
         yield context.reason("blocking-source", where, f"{_names(mixed)} is written with both = and <=")
@@ -77,7 +115,9 @@ def _group_traps(context: Context, group: Group) -> Iterator[Reason]:
     for name in sorted(group.variables & module.variables.keys()):
         kept = _KEEP & {attribute.lower() for attribute in module.variables[name].attributes}
         if kept:
-            yield context.reason("keep-attribute", module.variables[name].span, f"{_last(name)}: {', '.join(sorted(kept))}")
+            yield context.reason(
+                "keep-attribute", module.variables[name].span, f"{_last(name)}: {', '.join(sorted(kept))}"
+            )
     for reset in block.resets:
         load = _changing_load(reset, group)
         if load:
@@ -87,7 +127,8 @@ def _group_traps(context: Context, group: Group) -> Iterator[Reason]:
         yield context.reason("hierarchical-name", where, _names(frozenset(outside)))
     for statement in group.assigns:
         for node in statement.rhs.walk():
-            if (isinstance(node, Call) and not node.pure) or (isinstance(node, OpaqueExpr) and "++" in node.kind):
+            impure = isinstance(node, Call) and not node.pure
+            if impure or (isinstance(node, Operation) and node.operator in ASSIGNING):
                 yield context.reason("impure-call", statement.span)
 
 
@@ -112,7 +153,9 @@ def _changing_load(reset: AsyncReset, group: Group) -> Span | None:
             continue
         indices = [index for target in statement.targets for index in target.indices]
         for expr in (statement.rhs, *indices):
-            changing = expr.reads() - loops or any(isinstance(n, OpaqueExpr | Call) and expr.constant is None for n in expr.walk())
+            changing = expr.reads() - loops or any(
+                isinstance(n, OpaqueExpr | Call) and expr.constant is None for n in expr.walk()
+            )
             if changing:
                 return statement.span
     return None

@@ -99,10 +99,15 @@ class _Reader:
 
     def atom(self, expr: Expr) -> Formula:
         """Make a condition, or say why it cannot be copied; values that move within the block need a skeleton."""
-        if expr.reads() & self.temporaries.names:
+        if expr.reads() & self.temporaries.names or self.unseen_locals(expr):
             raise _NeedsSkeletonError
         check_condition(expr)
         return Atom(expr)
+
+    def unseen_locals(self, expr: Expr) -> bool:
+        """Say whether an expression reads a variable of the block that only the block can see (loops apart)."""
+        names = {node.name for node in expr.walk() if isinstance(node, Reference) and node.is_local}
+        return bool(names - self.loops)
 
     def written(self, statement: Assign) -> Formula:
         """Say when an assignment writes something else than the register's own value; nothing is checked yet."""
@@ -159,8 +164,21 @@ class _Reader:
         if needed & self.temporaries.holding:
             raise CannotCopyError("temporary-holds")
         copied = branches.around(body, lambda a: self.is_leaf(a) or _writes_any(a, needed))
-        _check_branches(copied)
+        self.check_branches(copied)
         return self._skeleton_condition(leaves, copied, needed)
+
+    def check_branches(self, copied: tuple[Statement, ...]) -> None:
+        """Refuse branches whose text cannot stand beside the block."""
+        for expr in branches.conditions(copied):
+            check_condition(expr)
+        for expr, wildcards in branches.labels(copied):
+            check_condition(expr, wildcards=wildcards)
+        for statement in copied:
+            if isinstance(statement, Assign) and statement.blocking:
+                check_condition(statement.rhs)
+        hidden = branches.local_reads(copied) - self.temporaries.names - self.loops
+        if hidden:
+            raise CannotCopyError("temporary-holds")
 
     def _leaf(self, statement: Assign) -> Leaf:
         changed = self.written(statement)
@@ -243,13 +261,6 @@ def _check_readable(form: Formula) -> None:
     exprs = list(f.atoms(form))
     if len(exprs) > _MOST_ATOMS or sum(len(e.key) for e in exprs) > _MOST_CHARACTERS:
         raise _NeedsSkeletonError
-
-
-def _check_branches(copied: tuple[Statement, ...]) -> None:
-    for expr in branches.conditions(copied):
-        check_condition(expr)
-    for expr, wildcards in branches.labels(copied):
-        check_condition(expr, wildcards=wildcards)
 
 
 def _changed(rhs: Expr, target: Target) -> Formula:

@@ -31,7 +31,7 @@ class Enable:
         found: list[Outcome] = []
         for block in module.blocks:
             temporaries = find(block, module)
-            context = traps.Context(design, definition, module, block, temporaries)
+            context = traps.Context(design, definition, module, block, temporaries, frozenset(sources.launches))
             found.extend(_Finder(context, sources).outcomes())
         return tuple(found)
 

@@ -127,4 +127,6 @@ class ProofResult:
     def proved(self) -> bool:
         """Say whether everything was proved."""
         good = {EvidenceKind.PROVED, EvidenceKind.UNDER_TOP, EvidenceKind.FROM_RESET}
-        return not self.mismatches and not self.undecided and all(c.kind in good for c in self.cells) and not self.unread
+        return (
+            not self.mismatches and not self.undecided and all(c.kind in good for c in self.cells) and not self.unread
+        )

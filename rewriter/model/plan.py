@@ -138,7 +138,10 @@ Outcome = Proposal | Refusal | Anchor
 class Method(Protocol):
     """Find registers of one kind."""
 
-    name: str
+    @property
+    def name(self) -> str:
+        """Give the method's word."""
+        ...
 
     def propose(self, module: Module, design: Design) -> tuple[Outcome, ...]:
         """Give an outcome for every register of the module body that this method understands."""

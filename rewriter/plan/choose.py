@@ -1,7 +1,7 @@
 """Choose the banks: which registers share a cell, and whether it pays."""
 
 from collections.abc import Iterable, Mapping
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 
 from rewriter.model.design import Edge
 from rewriter.model.plan import (
@@ -58,6 +58,7 @@ def choose(settled: Settled, policy: Policy, excluded: Mapping[RegisterId, Reaso
         cell = _cell(wake, proposals)
         cells.append(cell)
         banks.extend(_banks(cell, proposals))
+    banks = _distinctly_named(banks)
     return Plan(tuple(cells), tuple(banks), _block_plans(settled, banks, refusals), tuple(refusals))
 
 
@@ -171,6 +172,17 @@ def _banks(cell: Cell, proposals: list[Proposal]) -> list[Bank]:
         name = f"{cell.definition}.{cell.scope}{mine[0].register.name}"
         banks.append(Bank(name, cell.id, block, tuple(p.register for p in mine), mine, mine[0].method))
     return banks
+
+
+def _distinctly_named(banks: list[Bank]) -> list[Bank]:
+    """Number banks whose first registers share a name (parts of one variable, generate branches)."""
+    seen: dict[str, int] = {}
+    named: list[Bank] = []
+    for bank in banks:
+        seen[bank.name] = seen.get(bank.name, 0) + 1
+        count = seen[bank.name]
+        named.append(bank if count == 1 else replace(bank, name=f"{bank.name}#{count}"))
+    return named
 
 
 def _block_plans(settled: Settled, banks: list[Bank], refusals: list[Refusal]) -> tuple[BlockPlan, ...]:
