@@ -11,7 +11,7 @@ from tests.cores.running import BenchRun, Rtl
 from tests.cores.vexriscv import FULL, MIN, VexRiscv
 
 Bench = Callable[[Rtl], BenchRun]
-CORES_WITH_BENCH = ("picorv32", FULL.name, MIN.name, *BLOCKS)
+CORES_WITH_BENCH = ("picorv32", "picorv32_firmware", FULL.name, MIN.name, *BLOCKS)
 
 
 @dataclass(frozen=True)
@@ -26,6 +26,8 @@ class Benches:
         """Give the benches of a core, quickest first; empty for a core without one."""
         if core == "picorv32":
             return (self.picorv32.small, self.picorv32.firmware_verilator)
+        if core == "picorv32_firmware":
+            return (self.picorv32.firmware_verilator, self.picorv32.firmware_icarus)
         if core in BLOCKS:
             return (partial(self.logik.run, core),)
         return tuple(partial(self.vexriscv.run, variant) for variant in (FULL, MIN) if variant.name == core)
