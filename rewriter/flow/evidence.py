@@ -1,0 +1,87 @@
+"""Bring the prover's answers back to the banks of the plan."""
+
+import re
+from collections.abc import Iterator, Mapping
+
+from rewriter.model.design import Warning as Note
+from rewriter.model.evidence import CellEvidence, ProofResult
+from rewriter.model.plan import Bank, RegisterId
+from rewriter.model.reasons import PAGES, EvidenceKind, Reason, Verdict
+from rewriter.model.rewrite import Rewrite
+from rewriter.model.run import Run
+
+_INDEX = re.compile(r"\[-?\d+\]")
+_WORDS = {
+    EvidenceKind.DISPROVED: "disproved",
+    EvidenceKind.UNDECIDED: "undecided",
+    EvidenceKind.NOT_CHECKED: "not-checked",
+    EvidenceKind.UNPROVED: "not-checked",
+}
+_OPEN = {"undecided", "not-checked"}
+
+
+def pair(done: Rewrite, result: ProofResult) -> dict[str, tuple[CellEvidence, ...]]:
+    """Pair the evidence of elaborated cells with the cells of the plan, all generate indices together."""
+    by_place: dict[tuple[str, str], list[CellEvidence]] = {}
+    for evidence in result.cells:
+        by_place.setdefault((evidence.definition, _INDEX.sub("", evidence.cell)), []).append(evidence)
+    found: dict[str, tuple[CellEvidence, ...]] = {}
+    for cell in done.cells:
+        path = ".".join(part for part in (cell.scope.strip("."), cell.instance) if part)
+        found[cell.cell] = tuple(by_place.get((cell.definition, _INDEX.sub("", path)), ()))
+    return found
+
+
+def rejected(run: Run, *, allow_unproved: bool) -> dict[RegisterId, Reason]:
+    """Give the registers that the proof sends back, with the reason; none when no engine was asked."""
+    if run.proof is None:
+        return {}
+    objections = ((bank, _objection(run, bank, allow_unproved=allow_unproved)) for bank in run.plan.banks)
+    return {register: reason for bank, reason in objections if reason for register in bank.registers}
+
+
+def _objection(run: Run, bank: Bank, *, allow_unproved: bool) -> Reason | None:
+    """Give why a bank must not be written, None when it may."""
+    seen = run.evidence.get(bank.cell, ())
+    if not seen:
+        return None if allow_unproved else Reason("not-checked", "the engine did not meet its cell")
+    reasons = [reason for evidence in seen if (reason := _reason(evidence))]
+    hard = [reason for reason in reasons if reason.word not in _OPEN]
+    return next(iter(hard or ([] if allow_unproved else reasons)), None)
+
+
+def _reason(evidence: CellEvidence) -> Reason | None:
+    page = PAGES.get(evidence.reason)
+    word = evidence.reason if page and page.verdict is Verdict.REFUSED else _WORDS.get(evidence.kind)
+    return Reason(word, evidence.detail) if word else None
+
+
+def rejection_warnings(run: Run, back: Mapping[RegisterId, Reason]) -> Iterator[Note]:
+    """Say which banks the proof sends back, each with its first counterexample."""
+    for bank in run.plan.banks:
+        reason = back.get(bank.registers[0])
+        if reason is None:
+            continue
+        tables = [e.counterexample.table() for e in run.evidence.get(bank.cell, ()) if e.counterexample]
+        head = f"bank {_name(bank)} is left out, {reason.word}" + (f": {reason.detail}" if reason.detail else "")
+        yield Note("\n".join((head, *tables[:1])), help=_way_out(bank, reason))
+
+
+def _way_out(bank: Bank, reason: Reason) -> str:
+    page = f"`stillclock explain {reason.word}` says more"
+    if reason.word == "disproved" and bank.method == "enable":
+        return f"an enable written in the block always proves, so this is a fault of stillclock: report it; {page}"
+    return page
+
+
+def waived(run: Run) -> Iterator[Note]:
+    """Say loudly what is gated without proof."""
+    for bank in run.unproved_banks:
+        yield Note(
+            f"bank {_name(bank)} is gated WITHOUT PROOF ({run.kind(bank.cell).value})",
+            help="run `stillclock prove` before you rely on it",
+        )
+
+
+def _name(bank: Bank) -> str:
+    return f"{bank.block.definition}.{bank.name}"
