@@ -152,6 +152,11 @@ class Call(Expr):
 
 @dataclass(frozen=True)
 class Opaque(Expr):
-    """Stand for anything else; it is never copied or decided on. `kind` names the syntax."""
+    """Stand for anything else; it is never copied or decided on. `kind` names the syntax, `operands` what it reads."""
 
     kind: str = ""
+    operands: tuple[Expr, ...] = ()
+
+    def children(self) -> tuple[Expr, ...]:
+        """Give what it reads."""
+        return self.operands

@@ -1,0 +1,159 @@
+"""Clocks and asynchronous resets of a body: what drives them, and where they are read as data."""
+
+from collections.abc import Iterable, Iterator
+
+from pyslang.analysis import AnalysisManager
+from pyslang.ast import (
+    AssignmentExpression,
+    ContinuousAssignSymbol,
+    ConversionExpression,
+    Expression,
+    ExpressionKind,
+    NamedValueExpression,
+    PortSymbol,
+    ProceduralBlockSymbol,
+    Symbol,
+    SymbolKind,
+    ValueExpressionBase,
+    VisitAction,
+)
+
+from rewriter.frontend.blocks import event_signals
+from rewriter.frontend.bodies import Body
+from rewriter.frontend.elaboration import body_of
+from rewriter.frontend.expressions import names_in
+from rewriter.frontend.places import Locator
+from rewriter.model.source import Span
+
+
+class EventPorts:
+    """Tell which ports of a body are clocks or asynchronous resets, below it as well."""
+
+    def __init__(self, bodies: dict[str, Body]) -> None:
+        self._bodies = bodies
+        self._known: dict[str, frozenset[str]] = {}
+
+    def of(self, key: str) -> frozenset[str]:
+        """Give the names of ports of body `key` that reach an event list."""
+        if key not in self._known:
+            self._known[key] = frozenset()  # a circle of instances cannot be elaborated
+            self._known[key] = self._find(self._bodies[key])
+        return self._known[key]
+
+    def connections(self, body: Body) -> Iterator[Expression]:
+        """Give what a body connects to such ports of its instances."""
+        for _, child in body.children:
+            names = self.of(body_of(child).hierarchicalPath)
+            for connection in child.portConnections if names else ():
+                if connection.port.name in names and connection.expression is not None:
+                    yield connection.expression
+
+    def _find(self, body: Body) -> frozenset[str]:
+        symbols = {name.symbol for signal in event_expressions(body) for name in names_in(signal)}
+        symbols |= {name.symbol for expression in self.connections(body) for name in names_in(expression)}
+        ports = (port for port in body.symbol.portList if isinstance(port, PortSymbol))
+        return frozenset(port.name for port in ports if port.internalSymbol is not None and port.internalSymbol in symbols)
+
+
+def event_expressions(body: Body) -> Iterator[Expression]:
+    """Give the signals of all edge events in a body."""
+    for procedure in body.procedures:
+        yield from event_signals(procedure)
+
+
+def clock_drivers(body: Body, ports: EventPorts, analysis: AnalysisManager) -> dict[Symbol, Expression]:
+    """Give every variable that reaches a clock or asynchronous reset of the body, also through assignments.
+
+    Returns:
+        The place of use by symbol.
+    """
+    found: dict[Symbol, Expression] = {}
+    waiting = [*event_expressions(body), *ports.connections(body)]
+    for expression in waiting:  # grows while it is walked
+        for name in names_in(expression):
+            symbol = name.symbol
+            if symbol in found:
+                continue
+            found[symbol] = expression
+            waiting.extend(_assigned(analysis, name))
+    return found
+
+
+def _assigned(analysis: AnalysisManager, name: ValueExpressionBase) -> Iterator[Expression]:
+    for driver in analysis.getDrivers(name.symbol):
+        source = driver.containingSymbol
+        if isinstance(source, ContinuousAssignSymbol) and isinstance(source.assignment, AssignmentExpression):
+            yield source.assignment.right
+
+
+def data_uses(body: Body, clocks: Iterable[Symbol], locator: Locator) -> dict[Symbol, Span]:
+    """Find clocks that are read as data or combined with something in a body.
+
+    A plain alias (`assign a = clk`) is no such use; its other reads are.
+    """
+    uses: dict[Symbol, Span] = {}
+    origin: dict[Symbol, Symbol] = {clock: clock for clock in clocks}
+    before = 0
+    while origin and len(origin) > before:
+        before = len(origin)
+        aliases: dict[Symbol, Symbol] = {}
+        for name in _data_reads(body, origin, aliases):
+            uses.setdefault(origin[name.symbol], locator.span(name.sourceRange))
+        origin.update({alias: origin[clock] for alias, clock in aliases.items() if alias not in origin})
+    return uses
+
+
+def _data_reads(body: Body, clocks: dict[Symbol, Symbol], aliases: dict[Symbol, Symbol]) -> Iterator[ValueExpressionBase]:
+    hits: list[ValueExpressionBase] = []
+
+    def read(name: ValueExpressionBase) -> None:
+        if name.symbol in clocks:
+            hits.append(name)
+
+    def assign(symbol: ContinuousAssignSymbol) -> VisitAction:
+        pair = _plain_alias(symbol)
+        if pair is None or pair[1] not in clocks:
+            return VisitAction.Advance
+        aliases[pair[0]] = pair[1]
+        return VisitAction.Skip
+
+    def edges(block: ProceduralBlockSymbol) -> VisitAction:
+        skipped.update(_key(signal) for signal in event_signals(block))
+        return VisitAction.Advance
+
+    skipped: set[tuple[int, int]] = set()
+    body.symbol.visit(lookup_table={
+        ExpressionKind.NamedValue: read, SymbolKind.ContinuousAssign: assign, SymbolKind.ProceduralBlock: edges,
+        SymbolKind.Instance: _skip,
+    })
+    yield from (hit for hit in hits if _key(hit) not in skipped)
+    for _, child in body.children:
+        for connection in child.portConnections:
+            expression = connection.expression
+            if expression is not None and not isinstance(_plain(expression), NamedValueExpression):
+                yield from (name for name in names_in(expression) if name.symbol in clocks)
+
+
+def _skip(_: object) -> VisitAction:
+    return VisitAction.Skip
+
+
+def _key(expression: Expression) -> tuple[int, int]:
+    start = expression.sourceRange.start
+    return start.buffer.id, start.offset
+
+
+def _plain(expression: Expression) -> Expression:
+    while isinstance(expression, ConversionExpression) and expression.isImplicit:
+        expression = expression.operand
+    return expression
+
+
+def _plain_alias(symbol: ContinuousAssignSymbol) -> tuple[Symbol, Symbol] | None:
+    assignment = symbol.assignment
+    if not isinstance(assignment, AssignmentExpression):
+        return None
+    left, right = _plain(assignment.left), _plain(assignment.right)
+    if isinstance(left, NamedValueExpression) and isinstance(right, NamedValueExpression):
+        return left.symbol, right.symbol
+    return None

@@ -1,0 +1,111 @@
+"""Drivers: what drives a variable; combinational logic is lowered only when somebody asks."""
+
+from pyslang.analysis import AnalysisManager, DriverFlags, DriverKind, DriverSource, ValueDriver
+from pyslang.ast import (
+    AssignmentExpression,
+    ContinuousAssignSymbol,
+    NetSymbol,
+    ProceduralBlockSymbol,
+    TimedStatement,
+    ValueSymbol,
+)
+
+from rewriter.frontend.bits import slang_bits
+from rewriter.frontend.blocks import is_clocked
+from rewriter.frontend.expressions import Expressions
+from rewriter.frontend.places import Locator
+from rewriter.frontend.statements import Statements
+from rewriter.model.design import Driver, Writer, WriterKind
+from rewriter.model.expr import Expr
+from rewriter.model.source import Span
+from rewriter.model.statement import Statement
+
+_PROCEDURES = {
+    DriverSource.Initial: WriterKind.INITIAL,
+    DriverSource.Final: WriterKind.INITIAL,
+    DriverSource.AlwaysComb: WriterKind.COMBINATIONAL,
+    DriverSource.AlwaysLatch: WriterKind.LATCH,
+    DriverSource.AlwaysFF: WriterKind.CLOCKED,
+}
+
+
+def kind_of(driver: ValueDriver) -> WriterKind | None:
+    """Name the kind of a driver; None for an input port and for the initial value of a declaration."""
+    source = driver.containingSymbol
+    if driver.isInputPort:
+        return None
+    if driver.flags & DriverFlags.Initializer:
+        return WriterKind.CONTINUOUS if isinstance(driver.symbol, NetSymbol) else None
+    if driver.flags & DriverFlags.OutputPort:
+        return WriterKind.INSTANCE
+    if isinstance(source, ProceduralBlockSymbol) and driver.source is DriverSource.Always:
+        return WriterKind.CLOCKED if is_clocked(source) else WriterKind.COMBINATIONAL
+    if driver.kind is DriverKind.Continuous:
+        return WriterKind.CONTINUOUS if isinstance(source, ContinuousAssignSymbol) else WriterKind.INSTANCE
+    return _PROCEDURES.get(driver.source, WriterKind.COMBINATIONAL)
+
+
+def writers_of(symbol: ValueSymbol, analysis: AnalysisManager, locator: Locator) -> tuple[Writer, ...]:
+    """Give everything that writes a variable, clocked blocks included."""
+    found: list[Writer] = []
+    for driver in analysis.getDrivers(symbol):
+        kind = kind_of(driver)
+        if kind is None:
+            continue
+        source = driver.containingSymbol
+        syntax = source.syntax
+        block = isinstance(source, (ProceduralBlockSymbol, ContinuousAssignSymbol)) and syntax is not None
+        place = syntax.sourceRange if block and syntax is not None else driver.sourceRange
+        found.append(Writer(kind, slang_bits(driver.bounds, symbol.type), locator.span(place)))
+    return tuple(dict.fromkeys(found))
+
+
+class LazyDrivers:
+    """Implement `Drivers`; it keeps the elaboration alive through what it holds."""
+
+    def __init__(self, owner: object, analysis: AnalysisManager, locator: Locator) -> None:
+        self._owner = owner
+        self._analysis = analysis
+        self._locator = locator
+        self._bodies: dict[str, Expressions] = {}
+        self._known: dict[tuple[str, str], tuple[Driver, ...]] = {}
+
+    def add(self, body: str, expressions: Expressions) -> None:
+        """Make a body known."""
+        self._bodies[body] = expressions
+
+    def drivers_of(self, body: str, variable: str) -> tuple[Driver, ...]:
+        """Give what drives a variable of a module body; empty for inputs and undriven ones."""
+        key = (body, variable)
+        if key not in self._known:
+            self._known[key] = self._find(body, variable)
+        return self._known[key]
+
+    def _find(self, body: str, variable: str) -> tuple[Driver, ...]:
+        expressions = self._bodies[body]
+        symbol = expressions.names.symbol(variable)
+        if not isinstance(symbol, ValueSymbol):
+            return ()
+        found: list[Driver] = []
+        for driver in self._analysis.getDrivers(symbol):
+            kind = kind_of(driver)
+            if kind is not None:
+                span, value = self._value(driver, kind, expressions)
+                found.append(Driver(kind, slang_bits(driver.bounds, symbol.type), span, value))
+        return tuple(dict.fromkeys(found))
+
+    def _value(self, driver: ValueDriver, kind: WriterKind,
+               expressions: Expressions) -> tuple[Span, Expr | Statement | None]:
+        source = driver.containingSymbol
+        span = self._locator.span(driver.sourceRange)
+        if kind is WriterKind.CONTINUOUS:
+            assignment = source.assignment if isinstance(source, ContinuousAssignSymbol) else None
+            if isinstance(assignment, AssignmentExpression):
+                return self._locator.span(assignment.sourceRange), expressions.lower(assignment.right)
+            initial = driver.symbol.initializer
+            return span, expressions.lower(initial) if initial is not None else None
+        if isinstance(source, ProceduralBlockSymbol) and kind in (WriterKind.COMBINATIONAL, WriterKind.LATCH):
+            body = source.body
+            inner = body.stmt if isinstance(body, TimedStatement) else body
+            return span, Statements(expressions, self._locator).lower(inner)
+        return span, None

@@ -1,0 +1,74 @@
+"""Names: paths of symbols within a module body."""
+
+from pyslang.ast import (
+    EnumValueSymbol,
+    GenvarSymbol,
+    InstanceBodySymbol,
+    ParameterSymbol,
+    StatementBlockSymbol,
+    Symbol,
+)
+
+
+class Names:
+    """Give the path of each symbol as one module body sees it.
+
+    Variables of unnamed blocks would collide (`for (int i …)` twice), so they carry the offset of
+    their declaration: `i@120`.
+    """
+
+    def __init__(self, body: InstanceBodySymbol) -> None:
+        self._prefix = f"{body.hierarchicalPath}."
+        self._body = body
+        self._paths: dict[Symbol, tuple[str, bool]] = {}
+        self._symbols: dict[str, Symbol] = {}
+
+    def path(self, symbol: Symbol) -> str:
+        """Give the path within the body, or the full path of a symbol outside."""
+        return self._look_up(symbol)[0]
+
+    def is_outside(self, symbol: Symbol) -> bool:
+        """Say whether a symbol lies outside the body."""
+        return self._look_up(symbol)[1]
+
+    def scope(self, symbol: Symbol) -> str:
+        """Give the generate scope of a symbol with its final dot, empty at module level."""
+        path = symbol.hierarchicalPath  # of a procedural block: its scope's, for it has no name
+        return f"{path[len(self._prefix):]}." if path.startswith(self._prefix) else ""
+
+    def symbol(self, path: str) -> Symbol | None:
+        """Give the symbol at a path that was met before, or that stands at module level; None when unknown."""
+        found = self._symbols.get(path)
+        return self._body.find(path) if found is None and path.isidentifier() else found
+
+    def met(self) -> dict[str, Symbol]:
+        """Give all symbols of the body met so far, by path."""
+        return self._symbols
+
+    def _look_up(self, symbol: Symbol) -> tuple[str, bool]:
+        found = self._paths.get(symbol)
+        if found is None:
+            found = self._paths[symbol] = self._make(symbol)
+            if not found[1]:
+                self._symbols[found[0]] = symbol
+        return found
+
+    def _make(self, symbol: Symbol) -> tuple[str, bool]:
+        path = symbol.hierarchicalPath
+        inside = path.startswith(self._prefix)
+        if inside:
+            path = path[len(self._prefix) :]
+        scope = symbol.parentScope
+        if isinstance(scope, StatementBlockSymbol) and not scope.name:
+            path = f"{path}@{symbol.location.offset}"
+        return path, not inside
+
+
+def is_local(symbol: Symbol) -> bool:
+    """Say whether a symbol is declared inside a procedural block."""
+    return isinstance(symbol.parentScope, StatementBlockSymbol)
+
+
+def is_parameter(symbol: Symbol) -> bool:
+    """Say whether a symbol is fixed at elaboration."""
+    return isinstance(symbol, (ParameterSymbol, EnumValueSymbol, GenvarSymbol))
