@@ -1,0 +1,137 @@
+"""Print a pruned tree of branches that sets a wake signal at its leaves."""
+
+import re
+from collections.abc import Callable, Iterator, Mapping
+from dataclasses import dataclass
+
+from rewriter.edit.formula import FormulaWriter, bracketed
+from rewriter.edit.prune import ends_open
+from rewriter.edit.text import WIDTH, Page, copied, indented
+from rewriter.model.source import Span
+from rewriter.model.statement import Assign, Block, Case, CaseItem, Empty, If, Loop, Statement
+from rewriter.model.wake import Leaf
+
+
+@dataclass(frozen=True)
+class Printer:
+    """Print branches.
+
+    Args:
+        page: where their text stands.
+        leaves: by the span of the assignment that wakes.
+        formulas: writes the conditions of leaves.
+        target: what a leaf sets to 1.
+        label: names an inner block that declares variables.
+        complete: give every case a default (`always_comb` asks for it).
+        step: one step of indentation.
+    """
+
+    page: Page
+    leaves: Mapping[Span, Leaf]
+    formulas: FormulaWriter
+    target: str
+    label: Callable[[Block], str]
+    complete: bool
+    step: str
+
+    def lines(self, statement: Statement) -> list[str]:
+        """Give the lines of a statement, starting at the left margin."""
+        match statement:
+            case Block():
+                declared = [copied(self.page.text(d.span)) for d in statement.declarations]
+                inner = [line for s in statement.body for line in self.lines(s)]
+                label = f" : {self.label(statement)}" if declared else ""
+                return [f"begin{label}", *indented([*declared, *inner], self.step), "end"]
+            case If():
+                return self._print_if(statement)
+            case Case():
+                return self._print_case(statement)
+            case Loop():
+                return self._attached(copied(self.page.text(statement.head)), statement.body)
+            case Empty():
+                return [";"]
+            case _ if statement.span in self.leaves:
+                return [self._leaf_line(self.leaves[statement.span])]
+            case _:
+                return [copied(self.page.text(statement.span))]
+
+    def _leaf_line(self, leaf: Leaf) -> str:
+        set_it = f"{self.target} = 1'b1;"
+        if leaf.condition is None:
+            return set_it
+        return f"if {bracketed(self.formulas.write(leaf.condition))} {set_it}"
+
+    def _print_if(self, statement: If) -> list[str]:
+        head = re.sub(r"\A(?:unique0?|priority)\s+", "", copied(self.page.text(statement.head)))
+        if statement.other is None:
+            return self._attached(head, statement.then)
+        guarded = self._ends_open(statement.then)
+        lines = self._attached(head, statement.then, bracket=guarded)
+        other = self._attached("else", statement.other)
+        if lines[-1] == "end":
+            return [*lines[:-1], f"end {other[0]}", *other[1:]]
+        return [*lines, *other]
+
+    def _ends_open(self, statement: Statement) -> bool:
+        if isinstance(statement, Assign):
+            leaf = self.leaves.get(statement.span)
+            return leaf is not None and leaf.condition is not None
+        if isinstance(statement, If) and statement.other:
+            return self._ends_open(statement.other)
+        if isinstance(statement, Loop):
+            return self._ends_open(statement.body)
+        return ends_open(statement)
+
+    def _print_case(self, statement: Case) -> list[str]:
+        head = re.sub(r"\A(?:unique0?|priority)\s+", "", copied(self.page.text(statement.head)))
+        lines: list[str] = []
+        for run in runs(statement.items):
+            if len(run) > 1:
+                lines += indented(merged_labels([self._label(item) for item in run], self.step), self.step)
+            else:
+                lines += indented(self._attached(self._label(run[0]) + ":", run[0].body), self.step)
+        if self.complete and not any(item.is_default for item in statement.items):
+            lines.append(f"{self.step}default: ;")
+        return [head, *lines, "endcase"]
+
+    def _label(self, item: CaseItem) -> str:
+        text = copied(self.page.text(item.head)).rstrip()
+        return "default" if item.is_default else text.removesuffix(":").rstrip() + (" " if "\\" in text else "")
+
+    def _attached(self, head: str, body: Statement, *, bracket: bool = False) -> list[str]:
+        """Join a head with its body: on one line if it fits, else below."""
+        lines = self.lines(body)
+        if bracket:
+            return [f"{head} begin", *indented(lines, self.step), "end"]
+        short = len(lines) == 1 and len(head) + len(lines[0]) < WIDTH
+        if short or isinstance(body, (Block, Case)) or (head == "else" and isinstance(body, If)):
+            return [f"{head} {lines[0]}", *lines[1:]]
+        return [head, *indented(lines, self.step)]
+
+
+def runs(items: tuple[CaseItem, ...]) -> Iterator[tuple[CaseItem, ...]]:
+    """Group neighbouring empty items (not the default), which can share one `;`; others come alone."""
+    run: list[CaseItem] = []
+    for item in items:
+        if isinstance(item.body, Empty) and not item.is_default:
+            run.append(item)
+            continue
+        if run:
+            yield tuple(run)
+            run = []
+        yield (item,)
+    if run:
+        yield tuple(run)
+
+
+def merged_labels(labels: list[str], step: str) -> list[str]:
+    """Write `a, b, c: ;`, on several lines if it is long."""
+    lines = [labels[0]]
+    for label in labels[1:]:
+        if len(lines[-1]) + len(label) < WIDTH - 20:
+            lines[-1] += f", {label}"
+        else:
+            lines[-1] += ","
+            lines.append(step + label)
+    lines[-1] += ": ;"
+    return lines

@@ -1,0 +1,251 @@
+"""Copies of a block's branches that compute when its registers wake."""
+
+import re
+from dataclasses import dataclass, replace
+from functools import cached_property
+
+from rewriter.edit.branches import Printer
+from rewriter.edit.formula import FormulaWriter
+from rewriter.edit.names import is_plain
+from rewriter.edit.prune import Pruner, check_separate
+from rewriter.edit.text import WIDTH, CannotEditError, Page, copied, indented
+from rewriter.model.design import ClockedBlock, Language, Module, Variable
+from rewriter.model.source import Span
+from rewriter.model.statement import Assign, Block, Case, If, Loop, Statement
+from rewriter.model.wake import Leaf, Skeleton, WakeCondition
+
+_INTEGRAL = re.compile(
+    r"(?:(?:input|output|inout)\s+)?(?:wire|reg|logic|bit|tri)?\s*(?P<sign>signed|unsigned)?\s*(?P<dims>(?:\[.*\])?)\s*\Z",
+    re.DOTALL,
+)
+_WORD = re.compile(r"(?<![\w$.`\\])[A-Za-z_][\w$]*")
+
+
+@dataclass(frozen=True)
+class SkeletonWriter:
+    """Write the wake signal of one cell from the branches of one block.
+
+    Args:
+        page: file of the block.
+        module, block: a body that holds the block.
+        formulas: writes the conditions of leaves.
+        name: stem of inserted names; the signal is `wake_NAME`.
+        step: one step of indentation.
+    """
+
+    page: Page
+    module: Module
+    block: ClockedBlock
+    formulas: FormulaWriter
+    wake: WakeCondition
+    skeleton: Skeleton
+    name: str
+    step: str
+
+    @property
+    def signal(self) -> str:
+        """Give the wake signal's name."""
+        return f"wake_{self.name}"
+
+    def lines(self, language: Language) -> list[str]:
+        """Give the lines that declare and compute the wake signal, without indentation of the place.
+
+        Raises:
+            CannotEditError: `not-copyable`, `inside-macro`.
+        """
+        return self._function() if language is Language.VERILOG else self._always_comb()
+
+    def _always_comb(self) -> list[str]:
+        branches = self._branches(self.signal, complete=True)
+        declared = [*self._declarations(branches), f"{self.signal} = 1'b0;", *branches]
+        named = f" : {self.signal}_branches" if len(declared) > len(branches) + 1 else ""
+        return [f"logic {self.signal};", f"always_comb begin{named}", *indented(declared, self.step), "end"]
+
+    def _function(self) -> list[str]:
+        function = f"{self.signal}_f"
+        branches = self._branches(function, complete=False)
+        arguments = self._arguments(branches)
+        body = ["begin", *indented([f"{function} = 1'b0;", *branches], self.step), "end"]
+        head = _broken(f"function {function} (", _grouped(arguments), ");", self.step)
+        call = _broken(f"wire {self.signal} = {function}(", [name for name, _ in arguments], ");", self.step)
+        return [*head, *indented([*self._declarations(branches), *body], self.step), "endfunction", *call]
+
+    def _branches(self, target: str, *, complete: bool) -> list[str]:
+        def label(block: Block) -> str:
+            return f"{self.signal}_{block.span.start - self.block.span.start}"
+
+        printer = Printer(self.page, self._leaves, self.formulas, target, label, complete, self.step)
+        # The outermost block lends its declarations to the copy, so that its begin and end can go.
+        opened = isinstance(self._tree, Block) and self._tree.span == self._synchronous.span
+        parts = self._tree.children() if opened else (self._tree,)
+        return [line for part in parts for line in printer.lines(part)]
+
+    @property
+    def _synchronous(self) -> Statement:
+        if self.block.synchronous is None:
+            raise CannotEditError("not-copyable", "the block has no synchronous part", self.block.span)
+        return self.block.synchronous
+
+    @cached_property
+    def _tree(self) -> Statement:
+        """Give the synchronous branches that lead to leaves or feed their conditions."""
+        body = self._synchronous
+        if overlap := check_separate(body):
+            raise CannotEditError("inside-macro", "one macro makes several statements", overlap)
+        pruned = Pruner(lambda s: s.span in self._leaves or self._feeds(s)).prune(_plain(body))
+        if pruned is None:
+            raise CannotEditError("not-copyable", "no branch of the block is left", self.block.span)
+        return self._shortened(pruned)
+
+    @cached_property
+    def _leaves(self) -> dict[Span, Leaf]:
+        return {leaf.statement: leaf for leaf in self.skeleton.leaves}
+
+    def _feeds(self, statement: Statement) -> bool:
+        return (
+            isinstance(statement, Assign)
+            and statement.blocking
+            and any(target.variable in self.skeleton.temporaries for target in statement.targets)
+        )
+
+    def _wakes(self, statement: Statement) -> bool:
+        """Say whether this statement wakes without a condition of its own."""
+        return statement.span in self._leaves and self._leaves[statement.span].condition is None
+
+    def _shortened(self, statement: Statement) -> Statement:
+        """Leave out what no longer matters once the wake signal is 1 for sure, and brackets around one statement."""
+        match statement:
+            case Block():
+                body = tuple(self._shortened(inner) for inner in statement.body)
+                sure = next((inner for inner in body if self._wakes(inner)), None)
+                if sure:
+                    return sure
+                alone = len(body) == 1 and not statement.declarations
+                return body[0] if alone else replace(statement, body=body)
+            case If():
+                then = self._shortened(statement.then)
+                other = self._shortened(statement.other) if statement.other else None
+                return then if other and self._wakes(then) and self._wakes(other) else replace(
+                    statement, then=then, other=other
+                )
+            case Case():
+                items = tuple(replace(item, body=self._shortened(item.body)) for item in statement.items)
+                return replace(statement, items=items)
+            case Loop():
+                return replace(statement, body=self._shortened(statement.body))
+            case _:
+                return statement
+
+    def _declarations(self, branches: list[str]) -> list[str]:
+        """Declare the temporaries and loop variables that the copy writes, and what the outermost block declared."""
+        words = {word for line in branches for word in _WORD.findall(line)}
+        outer = self._synchronous
+        hoisted = outer.declarations if isinstance(outer, Block) else ()
+        lines = [copied(self.page.text(d.span)) for d in hoisted if words & set(d.names)]
+        local = {name for inner in self.block.body.walk() if isinstance(inner, Block) for name in _declared(inner)}
+        loops = [n for inner in self._tree.walk() if isinstance(inner, Loop) for n in inner.outer_variables]
+        for path in dict.fromkeys((*self.skeleton.temporaries, *loops)):
+            name = _simple(path)
+            if name in words and name not in local:
+                lines.append(local_declaration(self.module.variables.get(path), path))
+        return lines
+
+    def _declared_at(self, path: str) -> tuple[str, int, str]:
+        """Order variables as the text declares them."""
+        variable = self.module.variables.get(path)
+        return (variable.span.file, variable.span.start, path) if variable else ("", 0, path)
+
+    def _arguments(self, branches: list[str]) -> list[tuple[str, str]]:
+        """Give the name and the type of every variable that the function reads."""
+        words = {word for line in branches for word in _WORD.findall(line)}
+        found = {_simple(path): path for path in sorted(self.wake.reads)}
+        if len(found) < len(self.wake.reads):
+            raise CannotEditError("not-copyable", "two variables of one name are read", self.block.span)
+        names = sorted(found, key=lambda name: self._declared_at(found[name]))
+        macros = any("`" in line for line in branches)
+        arguments = [
+            (name, _input(self.module.variables.get(found[name]), name)) for name in names if macros or name in words
+        ]
+        if not arguments:
+            raise CannotEditError("not-copyable", "the branches read no variable", self.block.span)
+        return arguments
+
+
+def local_declaration(variable: Variable | None, path: str) -> str:
+    """Declare a local variable like one of the module.
+
+    Raises:
+        CannotEditError: `not-copyable`, its type is not known.
+    """
+    name = _simple(path)
+    if variable is None or variable.declaration is None:
+        raise CannotEditError("not-copyable", f"the type of {name} is not known")
+    kind = re.sub(r"\A(?:input|output|inout)\s+", "", copied(variable.declaration).strip())
+    kind = re.sub(r"\A(?:var|wire)\b\s*", "", kind)
+    if not kind or kind.startswith("[") or kind.startswith(("signed", "unsigned")):
+        kind = f"reg {kind}".rstrip()
+    return f"{kind} {name}{' ' if variable.unpacked else ''}{variable.unpacked};"
+
+
+def _plain(statement: Statement) -> Statement:
+    """Drop qualifiers, so that the pruner may drop items: the copy makes no promise that the original made."""
+    match statement:
+        case Block():
+            return replace(statement, body=tuple(_plain(inner) for inner in statement.body))
+        case If():
+            other = _plain(statement.other) if statement.other else None
+            return replace(statement, qualifier="", then=_plain(statement.then), other=other)
+        case Case():
+            items = tuple(replace(item, body=_plain(item.body)) for item in statement.items)
+            return replace(statement, qualifier="", items=items)
+        case Loop():
+            return replace(statement, body=_plain(statement.body))
+        case _:
+            return statement
+
+
+def _declared(block: Block) -> tuple[str, ...]:
+    return tuple(name for declaration in block.declarations for name in declaration.names)
+
+
+def _simple(path: str) -> str:
+    name = path.rsplit(".", 1)[-1]
+    if not is_plain(name):
+        raise CannotEditError("not-copyable", f"`{name}` has no plain name")
+    return name
+
+
+def _input(variable: Variable | None, name: str) -> str:
+    """Give the type of a function's argument that stands for a variable: `` or `signed [7:0]` or `integer`."""
+    if variable is None or variable.declaration is None or variable.unpacked:
+        raise CannotEditError("not-copyable", f"{name} cannot be an argument of a function")
+    text = copied(variable.declaration).strip()
+    if text in ("integer", "time"):
+        return text
+    found = _INTEGRAL.match(text)
+    if not found:
+        raise CannotEditError("not-copyable", f"{name} cannot be an argument of a Verilog function: {text}")
+    sign = "signed" if found["sign"] == "signed" else ""
+    return " ".join(part for part in (sign, found["dims"].strip()) if part)
+
+
+def _grouped(arguments: list[tuple[str, str]]) -> list[str]:
+    """Write arguments, neighbours of one type in one group: `input rst, arm`, `input [1:0] mode`."""
+    texts: list[str] = []
+    last: str | None = None
+    for name, kind in arguments:
+        texts.append(name if kind == last else " ".join(part for part in ("input", kind, name) if part))
+        last = kind
+    return texts
+
+
+def _broken(head: str, items: list[str], tail: str, step: str) -> list[str]:
+    """Write a list between brackets, on several lines if it is long."""
+    lines = [head]
+    for i, item in enumerate(items):
+        text = item + (", " if i < len(items) - 1 else tail)
+        if len(lines[-1]) + len(text) > WIDTH and lines[-1].strip():
+            lines[-1] = lines[-1].rstrip()
+            lines.append(step)
+        lines[-1] += text
+    return [line.rstrip() for line in lines]

@@ -1,0 +1,286 @@
+"""Split a block: what stays in it, and a copy for each bank on a clock of its own."""
+
+import re
+from collections.abc import Iterator
+from dataclasses import dataclass
+from functools import cached_property
+
+from rewriter.edit.cuts import Cut, applied, difference, gaps, has_directive, tidied, whole_line_comments
+from rewriter.edit.names import COPY_FORMS, Names
+from rewriter.edit.prune import Pruner, check_separate
+from rewriter.edit.site import source_path
+from rewriter.edit.skeleton import local_declaration
+from rewriter.edit.text import COMMENT, CannotEditError, Page
+from rewriter.model.design import ClockedBlock, Module
+from rewriter.model.plan import Bank
+from rewriter.model.source import Span
+from rewriter.model.statement import Assign, Block, Case, If, Loop, Opaque, Statement, Target
+
+_CONDITIONAL = re.compile(r"`(?:ifdef|ifndef|elsif|else|endif)\b")
+_GROUP_ENDS = re.compile(r"[ \t]*(?:end(?:case)?\b|else\b|//|/\*|\r?\n|\Z)")
+
+
+@dataclass(frozen=True)
+class Splitter:
+    """Cut one block's text.
+
+    Args:
+        page: its file.
+        module, block: a body that holds it.
+        banks: the banks that leave it.
+        step: one step of indentation.
+    """
+
+    page: Page
+    module: Module
+    block: ClockedBlock
+    banks: tuple[Bank, ...]
+    step: str
+
+    def check(self) -> None:
+        """Refuse a block whose text cannot be cut.
+
+        Raises:
+            CannotEditError: `inside-macro`, `inactive-code`.
+        """
+        if overlap := check_separate(self.block.body):
+            raise CannotEditError("inside-macro", "one macro makes several statements", overlap)
+        for start, end in self._gaps:
+            plain = _CONDITIONAL.sub(" ", self._uncommented(start, end))
+            if has_directive(plain):
+                raise CannotEditError("inactive-code", "a compiler directive stands inside the block", self._at(start))
+
+    # what stays
+
+    @cached_property
+    def residual(self) -> tuple[Cut, ...] | None:
+        """Give the cuts that leave what no bank takes; None when nothing is left that matters.
+
+        Raises:
+            CannotEditError: `inactive-code`, macro text would go with what leaves.
+        """
+        stays = Pruner(self._stays, self._holds, self._is_full).prune(self.block.body)
+        if stays is None or not any(self._matters(inner) for inner in stays.walk()):
+            return None
+        cuts = tidied(self.page, self.block.span, list(difference(self.page, self.block.body, stays, self.step)))
+        for start, end in self._gaps:
+            lost = any(cut.start <= start and end <= cut.end for cut in cuts)
+            if lost and "`" in self._uncommented(start, end):
+                raise CannotEditError("inactive-code", "text of a macro stands among what leaves the block", self._at(start))
+        return tuple(self._with_comments(cut) for cut in cuts)
+
+    def _stays(self, statement: Statement) -> bool:
+        return not (isinstance(statement, Assign) and any(self._writes(bank, statement) for bank in self.banks))
+
+    def _matters(self, statement: Statement) -> bool:
+        match statement:
+            case Opaque():
+                return True
+            case Assign():
+                return not all(target.is_local for target in statement.targets)
+            case Block():
+                return self._holds(statement)
+            case _:
+                return False
+
+    def _with_comments(self, cut: Cut) -> Cut:
+        """Let the comments right above whole lines go with them, when the lines end their paragraph."""
+        data = self.page.data
+        if cut.text or data[cut.start - 1] != "\n" or not _GROUP_ENDS.match(data, cut.end):
+            return cut
+        start = cut.start
+        for comment in reversed(self._comments):
+            line = self.page.line_start(comment.start)
+            if comment.end < start and not data[comment.end : start].strip() and data.count("\n", comment.end, start) == 1:
+                start = line
+        return Cut(start, cut.end)
+
+    # what leaves
+
+    def copy(self, bank: Bank, gclk: str, stem: str, names: Names, *, keep_labels: bool) -> str:
+        """Give the block's text for one bank, from its first token to its last.
+
+        Args:
+            bank: whose registers it writes.
+            gclk: its clock.
+            stem: for the names of blocks.
+            names: of the definition.
+            keep_labels: the original block goes, so its labels can be used again.
+
+        Raises:
+            CannotEditError: `not-copyable`, `clock-unclear`.
+        """
+        if self.block.clock is None:
+            raise CannotEditError("clock-unclear", "the block has no clock", self.block.span)
+        needed = self._needed(bank)
+        pruned = self._pruned(bank, needed)
+        clock = self.block.clock.signal.span
+        cuts = [
+            Cut(clock.start, clock.end, gclk),
+            *difference(self.page, self.block.body, pruned, self.step),
+            *self._unused_declarations(pruned, needed),
+            *self._macros(),
+        ]
+        cuts += self._labels(pruned, self._declarations(needed), stem, names, keep_labels=keep_labels)
+        cuts += [comment for comment in self._comments if not self._moves(comment, cuts)]
+        text = applied(self.page, self.block.span, tidied(self.page, self.block.span, cuts))
+        return self.page.newline.join(line for line in text.split(self.page.newline) if line.strip())
+
+    def _pruned(self, bank: Bank, needed: frozenset[str]) -> Statement:
+        def keep(statement: Statement) -> bool:
+            if not isinstance(statement, Assign):
+                return False
+            return self._writes(bank, statement) or _feeds(statement, needed)
+
+        pruned = Pruner(keep, is_full=self._is_full).prune(self.block.body)
+        if pruned is None:
+            raise CannotEditError("unsplittable", "no assignment of the bank was found", self.block.span)
+        return pruned
+
+    def _needed(self, bank: Bank) -> frozenset[str]:
+        """Give the temporaries whose values the bank's assignments and branches use."""
+        needed = frozenset(name for proposal in bank.proposals for name in proposal.needs)
+        while True:
+            reads = frozenset[str]().union(*(_reads(s) for s in self._pruned(bank, needed).walk()))
+            more = needed | (reads & self._blocking)
+            if more == needed:
+                return needed
+            needed = more
+
+    @cached_property
+    def _blocking(self) -> frozenset[str]:
+        return frozenset(t.variable for s in self.block.body.walk() for t in _blocking_targets(s))
+
+    @cached_property
+    def _local(self) -> frozenset[str]:
+        """Give the variables that the block declares itself: they come along with their declarations."""
+        targets = (t for s in self.block.body.walk() for t in _blocking_targets(s))
+        return frozenset(target.variable for target in targets if target.is_local)
+
+    def _declarations(self, needed: frozenset[str]) -> list[str]:
+        declared = {n for s in self.block.body.walk() if isinstance(s, Block) for d in s.declarations for n in d.names}
+        return [
+            local_declaration(self.module.variables.get(path), path)
+            for path in sorted(needed - self._local)
+            if path.rsplit(".", 1)[-1] not in declared
+        ]
+
+    def _unused_declarations(self, pruned: Statement, needed: frozenset[str]) -> Iterator[Cut]:
+        loops = {n for s in pruned.walk() if isinstance(s, Loop) for n in s.outer_variables}
+        used = {path.rsplit(".", 1)[-1] for path in needed | loops}
+        for statement in pruned.walk():
+            if isinstance(statement, Block):
+                for declaration in statement.declarations:
+                    if not used & set(declaration.names):
+                        yield Cut(declaration.span.start, declaration.span.end)
+
+    def _labels(
+        self, pruned: Statement, declared: list[str], stem: str, names: Names, *, keep_labels: bool
+    ) -> Iterator[Cut]:
+        """Name the copy where it declares something, and take labels off that stay with the original."""
+        body = self.block.body
+        if declared:
+            name = names.reserve(stem, COPY_FORMS) + "_copy"
+            inner = self.page.newline + self.page.indent(self.block.span.start) + self.step
+            opened = f"begin : {name}" + "".join(inner + line for line in declared)
+            if isinstance(body, Block):
+                yield Cut(body.begin.start, body.begin.end, opened)
+                yield Cut(body.end.start, body.end.end, "end")
+            else:
+                closing = self.page.newline + self.page.indent(self.block.span.start) + "end"
+                yield Cut(body.span.start, body.span.start, opened + inner)
+                yield Cut(body.span.end, body.span.end, closing)
+        for block in pruned.walk():
+            renamed = isinstance(block, Block) and block.label and not (declared and block.span == body.span)
+            if renamed and not keep_labels:
+                label = f" : {names.reserve(f'{block.label}_{stem}', ('{}',))}" if block.declarations else ""
+                yield Cut(block.begin.start, block.begin.end, f"begin{label}")
+                yield Cut(block.end.start, block.end.end, "end")
+
+    def _macros(self) -> Iterator[Cut]:
+        """Take out macros that stand for nothing and conditional text: they stay with the original."""
+        for start, end in self._gaps:
+            plain = self._uncommented(start, end)
+            if "`" in plain:
+                yield Cut(start + plain.index("`"), start + len(plain.rstrip()))
+
+    def _moves(self, comment: Cut, cuts: list[Cut]) -> bool:
+        """Say whether a comment left the original block together with the line that follows it, which is kept here."""
+        residual = self.residual
+        if residual is not None and not any(cut.covers(comment) for cut in residual):
+            return False
+        following = comment.end
+        while following < self.block.span.end and self.page.data[following].isspace():
+            following += 1
+        after = next((c for c in self._comments if c.start == following), None)
+        if after:
+            return self._moves(after, cuts)
+        return not any(cut.start <= following < cut.end and not cut.text for cut in cuts)
+
+    # helpers
+
+    def _writes(self, bank: Bank, statement: Assign) -> bool:
+        if statement.blocking:
+            return False
+        return any(self._in_bank(bank, target) for target in statement.targets)
+
+    def _in_bank(self, bank: Bank, target: Target) -> bool:
+        path = source_path(target.variable, self.block.scope)
+        msb, lsb = target.bits
+        return any(
+            part.variable == path and (part.whole or (msb >= part.lsb and lsb <= part.msb))
+            for register in bank.registers
+            for part in register.parts
+        )
+
+    def _is_full(self, case: Case) -> bool:
+        """Say whether a tool may take the case to be complete, by attribute or by a comment on its first line."""
+        line = self.page.data[case.head.end : self.page.line_end(case.head.end)]
+        return "full_case" in case.attribute_names or "full_case" in line
+
+    def _holds(self, block: Block) -> bool:
+        """Say whether text of macros or directives stands right inside a block."""
+        edges = [block.begin.end, *(e for s in block.body for e in (s.span.start, s.span.end)), block.end.start]
+        for declaration in block.declarations:
+            edges += [declaration.span.start, declaration.span.end]
+        edges.sort()
+        return any("`" in self._uncommented(edges[i], edges[i + 1]) for i in range(0, len(edges), 2))
+
+    @cached_property
+    def _gaps(self) -> tuple[tuple[int, int], ...]:
+        return tuple(gaps(self.block.body))
+
+    @cached_property
+    def _comments(self) -> tuple[Cut, ...]:
+        return tuple(c for start, end in self._gaps for c in whole_line_comments(self.page, start, end))
+
+    def _uncommented(self, start: int, end: int) -> str:
+        return COMMENT.sub(lambda found: " " * len(found[0]), self.page.data[start:end])
+
+    def _at(self, offset: int) -> Span:
+        return Span(self.page.path, offset, offset)
+
+
+def _feeds(statement: Assign, needed: frozenset[str]) -> bool:
+    return statement.blocking and any(target.variable in needed for target in statement.targets)
+
+
+def _blocking_targets(statement: Statement) -> tuple[Target, ...]:
+    return statement.targets if isinstance(statement, Assign) and statement.blocking else ()
+
+
+def _reads(statement: Statement) -> frozenset[str]:
+    """Give what a statement itself reads, the statements below it left aside."""
+    match statement:
+        case If():
+            return statement.condition.reads()
+        case Case():
+            labels = (label.reads() for item in statement.items for label in item.labels)
+            return statement.selector.reads().union(*labels)
+        case Loop():
+            return statement.reads
+        case Assign():
+            indices = (index.reads() for target in statement.targets for index in target.indices)
+            return statement.rhs.reads().union(*indices)
+        case _:
+            return frozenset()
