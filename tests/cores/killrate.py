@@ -15,6 +15,7 @@ from tests.cores.rewriting import Rewritten, rewrite
 from tests.cores.running import BenchRun, Rtl
 from tests.cores.testbenches import Bench, set_up
 
+HANG = 15.0  # seconds; without a fault every simulation ends within two
 Prover = Callable[[Fault, Rtl], bool]
 
 
@@ -138,7 +139,7 @@ def main(arguments: Sequence[str] | None = None) -> int:
     parser.add_argument("--seed", type=int, default=1)
     asked = parser.parse_args(arguments)
     rewritten = rewrite(asked.core, asked.out / "rewritten")
-    place = workplace(rewritten, set_up(asked.out).of(asked.core), asked.out / "faulty")
+    place = workplace(rewritten, set_up(asked.out).of(asked.core, HANG), asked.out / "faulty")
     outcomes = kill_rate(place, plant(place.text, rewritten.registers, count=asked.count, seed=asked.seed))
     (asked.out / "outcomes.json").write_text(as_json(asked.core, asked.seed, outcomes), encoding="utf-8")
     (asked.out / "table.md").write_text(table(outcomes), encoding="utf-8")

@@ -22,15 +22,20 @@ class Benches:
     vexriscv: VexRiscv
     logik: Logik
 
-    def of(self, core: str) -> tuple[Bench, ...]:
-        """Give the benches of a core, quickest first; empty for a core without one."""
+    def of(self, core: str, limit: float = 120) -> tuple[Bench, ...]:
+        """Give the benches of a core, quickest first, each stopped after `limit` seconds of simulation."""
         if core == "picorv32":
-            return (self.picorv32.small, self.picorv32.firmware_verilator)
+            return _limited(limit, self.picorv32.small, self.picorv32.firmware_verilator)
         if core == "picorv32_firmware":
-            return (self.picorv32.firmware_verilator, self.picorv32.firmware_icarus)
+            return _limited(limit, self.picorv32.firmware_verilator, self.picorv32.firmware_icarus)
         if core in BLOCKS:
-            return (partial(self.logik.run, core),)
-        return tuple(partial(self.vexriscv.run, variant) for variant in (FULL, MIN) if variant.name == core)
+            return _limited(limit, partial(self.logik.run, core))
+        (variant,) = (variant for variant in (FULL, MIN) if variant.name == core)
+        return _limited(limit, partial(self.vexriscv.run, variant))
+
+
+def _limited(limit: float, *benches: Callable[..., BenchRun]) -> tuple[Bench, ...]:
+    return tuple(partial(bench, limit=limit) for bench in benches)
 
 
 def set_up(scratch: Path) -> Benches:
