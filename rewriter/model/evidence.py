@@ -74,6 +74,8 @@ class CellEvidence:
         reason: a word of reasons.PAGES when not proved (`disproved`, `undecided`, `foreign-domain`, …).
         detail: one line.
         wider: a state in which the cell wakes though no assignment writes (None: shown impossible).
+        dead: those registers that differ but that nothing reads, such as temporaries of a block that sleeps; they
+            disprove nothing by themselves.
     """
 
     module: str
@@ -86,6 +88,7 @@ class CellEvidence:
     detail: str = ""
     counterexample: Counterexample | None = None
     wider: Counterexample | None = None
+    dead: tuple[str, ...] = ()
 
 
 @dataclass(frozen=True)
@@ -111,6 +114,7 @@ class ProofResult:
         unread: module instances the engine could not elaborate, with its message.
         seconds: where the time went, by stage.
         registers, bits: how many were compared.
+        notes: what a reader must know about the conditions under which this holds.
     """
 
     cells: tuple[CellEvidence, ...]
@@ -122,6 +126,7 @@ class ProofResult:
     seconds: Mapping[str, float]
     registers: int
     bits: int
+    notes: tuple[str, ...] = ()
 
     @property
     def proved(self) -> bool:

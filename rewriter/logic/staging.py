@@ -1,0 +1,127 @@
+"""Copy the texts of a design to where the engine sees them, and turn its messages back."""
+
+import re
+from dataclasses import dataclass, field
+from pathlib import Path, PurePosixPath
+
+from rewriter.logic.engine import MOUNT
+from rewriter.model.cells import FALLING, PORTS, RISING
+from rewriter.model.source import RtlSource
+
+WRAPPERS = (RISING, FALLING)
+
+_STUB = f"(input wire {PORTS.clock}, input wire {PORTS.wake}, input wire {PORTS.test}, output wire {PORTS.output}); endmodule"
+_WRAPPER = re.compile(rb"\bmodule\s+(%s|%s)\b.*?\bendmodule\b" % (FALLING.encode(), RISING.encode()), re.DOTALL)
+_PLAIN = re.compile(r"[\w./+\-]+\Z")
+
+
+@dataclass
+class Stage:
+    """One side's texts in the work folder.
+
+    Args:
+        folder: the work folder.
+        side: its name, `gold` or `gate`.
+        source: what is staged.
+        mended: declarations whose initial value was dropped, as text.
+    """
+
+    folder: Path
+    side: str
+    source: RtlSource
+    mended: list[str] = field(default_factory=list[str])
+
+    def write(self) -> None:
+        """Write the mirrored tree, with the bodies of our own cells left out."""
+        found: set[str] = set()
+        for text in self.source.texts:
+            data = text.data
+            if any(name.encode() in data for name in WRAPPERS):
+                found.update(name.decode() for name in _WRAPPER.findall(data))
+                data = _WRAPPER.sub(_without_body, data)
+            path = self._path(text.path)
+            path.parent.mkdir(parents=True, exist_ok=True)
+            path.write_bytes(data)
+        stubs = "".join(f"module {name} {_STUB}\n" for name in WRAPPERS if name not in found)
+        (self.folder / self.side / "stillclock_stubs.sv").write_text(stubs, encoding="ascii")
+        for directory in self.source.include_dirs:
+            self._path(directory).mkdir(parents=True, exist_ok=True)
+
+    def arguments(self, top: str, extra: tuple[str, ...]) -> Path:
+        """Write the engine's argument file.
+
+        Args:
+            top: top module.
+            extra: further options.
+        """
+        source = self.source
+        words = [*extra, "--top", top]
+        for name in WRAPPERS:
+            words += ["--blackboxed-module", name]
+        for option, values in (("-D", source.defines), ("-U", source.undefines), ("-G", source.parameters)):
+            for value in values:
+                words += [option, value]
+        for directory in source.include_dirs:
+            words += ["-I", self.seen(directory)]
+        for library in source.library_files:
+            words += ["-v", self.seen(library)]
+        words += [*source.options, *(self.seen(file) for file in source.files)]
+        words.append(f"{MOUNT}/{self.side}/stillclock_stubs.sv")
+        path = self.folder / f"{self.side}.f"
+        path.write_text("\n".join(_quoted(word) for word in words) + "\n", encoding="utf-8")
+        return path
+
+    def seen(self, path: str) -> str:
+        """Give the path under which the engine sees a file of the design."""
+        return f"{MOUNT}/{self.side}{PurePosixPath(path).as_posix()}"
+
+    def readable(self, messages: str) -> str:
+        """Turn the engine's paths back into the design's."""
+        return re.sub(rf"/?{MOUNT[1:]}/{self.side}(?=/)", "", messages)
+
+    def mend(self, messages: str) -> bool:
+        """Drop the initial values of declarations that the engine cannot read, in the copies only.
+
+        An initial value of a variable matters at time 0 alone, and the proof is about clock edges.
+
+        Returns:
+            Whether anything was changed.
+        """
+        changed = False
+        for file, line in _net_initialisers(messages):
+            path = self._path(file)
+            lines = path.read_bytes().split(b"\n")
+            before = lines[line - 1]
+            after = _INITIALISER.sub(rb"\1;", before, count=1)
+            if after != before:
+                lines[line - 1] = after
+                path.write_bytes(b"\n".join(lines))
+                self.mended.append(before.decode("utf-8", "replace").strip())
+                changed = True
+        return changed
+
+    def _path(self, path: str) -> Path:
+        return self.folder / self.side / PurePosixPath(path).relative_to("/")
+
+
+_INITIALISER = re.compile(rb"^(\s*(?:logic|reg|bit|var)\b[^=;]*?)\s*=[^;]*;")
+_MESSAGE = re.compile(rf"^/?{MOUNT[1:]}/\w+(/.*?):(\d+)(?::\d+)?: .*(?:error|ERROR)")
+
+
+def _net_initialisers(messages: str) -> set[tuple[str, int]]:
+    return {
+        (found[1], int(found[2]))
+        for line in messages.splitlines()
+        if "design initialization" in line and (found := _MESSAGE.match(line))
+    }
+
+
+def _without_body(found: re.Match[bytes]) -> bytes:
+    # The line count stays, so that messages keep their places.
+    return b"module " + found[1] + b" " + _STUB.encode() + b"\n" * found[0].count(b"\n")
+
+
+def _quoted(word: str) -> str:
+    if _PLAIN.match(word):
+        return word
+    return '"' + word.replace("\\", "\\\\").replace('"', '\\"') + '"'
