@@ -5,9 +5,12 @@ from dataclasses import dataclass
 from pyslang.ast import (
     ArgumentDirection,
     AssignmentExpression,
+    BlockStatement,
     CallExpression,
+    EmptyStatement,
     ExpressionKind,
     StatementKind,
+    StatementList,
     SubroutineSymbol,
     Symbol,
     ValueExpressionBase,
@@ -49,6 +52,16 @@ class Calls:
             return self._known[subroutine]
         name = call.subroutineName
         return CallFacts(name, frozenset(), name in _PURE_SYSTEM, system=True)
+
+    def does_nothing(self, call: CallExpression) -> bool:
+        """Say whether a call is one of a task without arguments and statements."""
+        subroutine = call.subroutine
+        if not isinstance(subroutine, SubroutineSymbol) or len(call.arguments):
+            return False
+        body = subroutine.body
+        while isinstance(body, BlockStatement):
+            body = body.body
+        return isinstance(body, EmptyStatement) or (isinstance(body, StatementList) and not len(body.list))
 
     def _examine(self, subroutine: SubroutineSymbol, seen: frozenset[SubroutineSymbol]) -> CallFacts:
         body = subroutine.body

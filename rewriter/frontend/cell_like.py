@@ -4,12 +4,15 @@ from pyslang.ast import (
     AssignmentExpression,
     BinaryExpression,
     BinaryOperator,
+    BlockStatement,
+    ConditionalStatement,
     ContinuousAssignSymbol,
     ExpressionKind,
     ProceduralBlockKind,
     ProceduralBlockSymbol,
     Symbol,
     SymbolKind,
+    TimedStatement,
 )
 
 from rewriter.frontend.blocks import is_clocked
@@ -17,7 +20,6 @@ from rewriter.frontend.bodies import Body
 from rewriter.frontend.expressions import names_in
 
 _JOINS = (BinaryOperator.BinaryAnd, BinaryOperator.LogicalAnd, BinaryOperator.BinaryOr, BinaryOperator.LogicalOr)
-_LATCHES = (ProceduralBlockKind.AlwaysLatch, ProceduralBlockKind.Always)
 
 
 def is_cell_like(body: Body) -> bool:
@@ -25,7 +27,7 @@ def is_cell_like(body: Body) -> bool:
     latched: set[Symbol] = set()
     read: set[Symbol] = set()
     for block in body.procedures:
-        if block.procedureKind in _LATCHES and not is_clocked(block):
+        if _is_latch(block):
             written = _written(block)
             latched |= written
             read |= {name.symbol for name in names_in(block)} - written
@@ -34,6 +36,19 @@ def is_cell_like(body: Body) -> bool:
     assigns: list[ContinuousAssignSymbol] = []
     body.symbol.visit(lookup_table={SymbolKind.ContinuousAssign: assigns.append})
     return any(_joins(assign, latched, read) for assign in assigns)
+
+
+def _is_latch(block: ProceduralBlockSymbol) -> bool:
+    """Say whether a block is a latch: `always_latch`, or `always @(…)` around a lone `if` without else."""
+    if block.procedureKind is ProceduralBlockKind.AlwaysLatch:
+        return True
+    statement = block.body
+    if block.procedureKind is not ProceduralBlockKind.Always or is_clocked(block) or not isinstance(statement, TimedStatement):
+        return False
+    statement = statement.stmt
+    while isinstance(statement, BlockStatement):
+        statement = statement.body
+    return isinstance(statement, ConditionalStatement) and statement.ifFalse is None
 
 
 def _written(block: ProceduralBlockSymbol) -> set[Symbol]:

@@ -9,6 +9,8 @@ from pathlib import Path
 from rewriter.model.errors import Place, UserError
 
 _VARIABLE = re.compile(r"\$(?:\((\w+)\)|\{(\w+)\}|(\w+))")
+_PLAIN = re.compile(r"[^\s\\\"'$]+(?=\s|\Z)")
+_PIECE = re.compile(r"[^\s\\\"'$]+")
 _LISTS = {"-f": False, "-F": True}
 
 
@@ -22,7 +24,7 @@ class Word:
 
     def path(self, text: str | None = None) -> str:
         """Give `text` (the word itself by default) as an absolute path, links resolved as slang does it."""
-        return os.path.realpath(Path(self.folder) / (self.text if text is None else text))
+        return os.path.realpath(os.path.join(self.folder, self.text if text is None else text))  # noqa: PTH118 (many)
 
     def error(self, message: str, help_line: str = "") -> UserError:
         """Make an error that points at this word when it stands in a list."""
@@ -103,12 +105,20 @@ class _Splitter:
 
     def word(self) -> str:
         """Read one word: quotes, backslashes and environment variables resolved."""
+        plain = _PLAIN.match(self.text, self.at)
+        if plain:
+            self.at = plain.end()
+            return plain[0]
         parts: list[str] = []
         while self.at < len(self.text) and not self.text[self.at].isspace():
             parts.append(self._piece())
         return "".join(parts)
 
     def _piece(self) -> str:
+        piece = _PIECE.match(self.text, self.at)
+        if piece:
+            self.at = piece.end()
+            return piece[0]
         character = self.text[self.at]
         self.at += 1
         if character == "\\":

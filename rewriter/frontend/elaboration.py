@@ -37,7 +37,7 @@ class Parsed:
             self.driver, self.extra_trees, self.warnings = self._parse(source, {**given, **mended})
             self.manager = self.driver.sourceManager
             self.locator = Locator(self.manager)
-        libraries = tuple(path for path in self._paths(pyslang.BufferKind.LibraryFile))
+        libraries = tuple(p for p, kind in self.locator.kinds.items() if kind is pyslang.BufferKind.LibraryFile)
         self.source = RtlSource(source.files, libraries, source.include_dirs, source.defines, source.undefines,
                                 source.tops, source.parameters, source.options, tuple(texts.values()))
 
@@ -46,25 +46,17 @@ class Parsed:
         warnings = configure(driver, self._arguments)
         manager = driver.sourceManager
         virtual: list[SyntaxTree] = []
+        files = frozenset(source.files)
         for path, text in texts.items():
             buffer = manager.assignText(path, _decode(text.data))
-            if path in source.files and not Path(path).exists():
+            if path in files and not os.path.exists(path):  # noqa: PTH110 (they are strings, and many)
                 virtual.append(SyntaxTree.fromBuffer(buffer, manager, driver.createOptionBag()))
         driver.parseAllSources()
         return driver, virtual, warnings
 
-    def _paths(self, *kinds: pyslang.BufferKind) -> list[str]:
-        buffers = (b for b in self.manager.getAllBuffers() if self.manager.getBufferKind(b) in kinds)
-        found = (str(self.manager.getFullPath(buffer)) for buffer in buffers)
-        return list(dict.fromkeys(path for path in found if os.path.isabs(path)))  # noqa: PTH117 (macro buffers have no path)
-
     def _texts(self, given: dict[str, SourceText]) -> dict[str, SourceText]:
-        kinds = (pyslang.BufferKind.DesignFile, pyslang.BufferKind.LibraryFile, pyslang.BufferKind.IncludeFile)
-        texts: dict[str, SourceText] = {}
-        for path in self._paths(*kinds):
-            if not Path(path).name.startswith("<"):
-                texts[path] = given.get(path) or SourceText(path, Path(path).read_bytes())
-        return texts
+        paths = (path for path in self.locator.kinds if os.path.isabs(path))  # noqa: PTH117 (they are strings)
+        return {path: given.get(path) or SourceText(path, Path(path).read_bytes()) for path in paths}
 
 
 class Elaboration:
@@ -182,7 +174,7 @@ def _read(path: str, word: Word) -> SourceText:
 def _on_disk(source: RtlSource) -> RtlSource:
     """Leave out files that exist only as text; they are parsed from memory."""
     texts = source.by_path
-    files = tuple(path for path in source.files if path not in texts or Path(path).exists())
+    files = tuple(path for path in source.files if path not in texts or os.path.exists(path))  # noqa: PTH110
     return RtlSource(files, source.library_files, source.include_dirs, source.defines, source.undefines,
                      source.tops, source.parameters, source.options)
 

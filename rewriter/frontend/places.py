@@ -27,11 +27,15 @@ class Locator:
         self._manager = manager
         self._files: dict[int, str] = {}
         self._texts: dict[int, bytes] = {}
+        self.kinds: dict[str, pyslang.BufferKind] = {}
         included: Counter[str] = Counter()
         for buffer in manager.getAllBuffers():
             kind = manager.getBufferKind(buffer)
             if kind in _FILE_KINDS:
                 path = str(manager.getFullPath(buffer))
+                if path.startswith("<"):  # a define of the command line
+                    continue
+                self.kinds[path] = kind
                 self._files[buffer.id] = path
                 included[path] += kind is pyslang.BufferKind.IncludeFile
         self.shared = frozenset(path for path, times in included.items() if times > 1)

@@ -114,8 +114,10 @@ class Statements:
     def _between(self, first: Token, last: Token) -> Span:
         return self.whole(pyslang.SourceRange(first.range.start, last.range.end))
 
-    def _empty(self, statement: EmptyStatement) -> Statement:
-        return Empty(self._span(statement))
+    def _empty(self, statement: EmptyStatement | ExpressionStatement) -> Statement:
+        """Lower a statement that does nothing; it may come from a macro, for its text is never changed."""
+        syntax = statement.syntax
+        return Empty(self._locator.span(statement.sourceRange if syntax is None else syntax.sourceRange))
 
     def _list(self, statement: StatementList) -> Statement:
         """Lower a list that stands where slang made a scope of its own; several declarations come with it."""
@@ -272,6 +274,8 @@ class Statements:
             return self._assign(statement, expression)
         if isinstance(expression, UnaryExpression) and expression.op in _STEPS:
             return self._step(statement, expression)
+        if isinstance(expression, CallExpression) and self._expressions.calls.does_nothing(expression):
+            return self._empty(statement)
         return self._opaque(statement)
 
     def _assign(self, statement: ExpressionStatement, expression: AssignmentExpression) -> Statement:
