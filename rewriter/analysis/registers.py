@@ -1,5 +1,6 @@
 """Registers of a clocked block: the bits that are always written together."""
 
+import re
 from collections.abc import Iterable, Iterator
 from dataclasses import dataclass
 from functools import cached_property
@@ -9,8 +10,10 @@ import networkx as nx
 
 from rewriter.model.design import ClockedBlock, Module
 from rewriter.model.plan import Part
-from rewriter.model.source import Span
+from rewriter.model.source import SourceText, Span
 from rewriter.model.statement import Assign, Index, Opaque, Target
+
+_NAME = re.compile(r"\s*(\\\S+\s|[\w$]+)")
 
 
 @dataclass(frozen=True)
@@ -63,7 +66,7 @@ def plain_scope(scope: str) -> str:
     return ".".join(piece.split("[", 1)[0] for piece in scope.split("."))
 
 
-def groups(block: ClockedBlock, module: Module) -> tuple[Group, ...]:
+def groups(block: ClockedBlock, module: Module, source: SourceText) -> tuple[Group, ...]:
     """Partition everything the block writes with `<=` into registers, in order of first writing."""
     assigns = [s for s in block.body.walk() if isinstance(s, Assign) and not s.blocking]
     graph: nx.Graph[tuple[str, tuple[int, int]]] = nx.Graph()
@@ -71,7 +74,7 @@ def groups(block: ClockedBlock, module: Module) -> tuple[Group, ...]:
         graph.add_nodes_from(ranges)
         graph.add_edges_from(pairwise(ranges))
     _tie_overlaps(graph)
-    found = [_group(block, module, component, assigns) for component in nx.connected_components(graph)]
+    found = [_group(block, module, source, component, assigns) for component in nx.connected_components(graph)]
     return tuple(sorted(found, key=lambda g: g.assigns[0].span.start if g.assigns else block.span.end))
 
 
@@ -97,18 +100,24 @@ def _tie_overlaps(graph: "nx.Graph[tuple[str, tuple[int, int]]]") -> None:
 
 
 def _group(
-    block: ClockedBlock, module: Module, nodes: set[tuple[str, tuple[int, int]]], assigns: list[Assign]
+    block: ClockedBlock,
+    module: Module,
+    source: SourceText,
+    nodes: set[tuple[str, tuple[int, int]]],
+    assigns: list[Assign],
 ) -> Group:
     ranges = tuple(sorted(_merged(nodes)))
     names = {name for name, _ in nodes}
     mine = tuple(a for a in assigns if any((t.variable, t.bits) in nodes for t in a.targets))
-    first = {t.variable: a.span.start for a in reversed(mine) for t in a.targets if t.variable in names}
-    ordered = sorted(ranges, key=lambda r: (first.get(r[0], 0), r[0], -r[1][0]))
-    parts = tuple(_part(block, module, name, bits) for name, bits in ordered)
     written = [t for a in mine for t in a.targets if t.variable in names]
+    order = {name: position for position, name in enumerate(dict.fromkeys(t.variable for t in written))}
+    ordered = sorted(ranges, key=lambda r: (order.get(r[0], len(order)), r[0], -r[1][0]))
+    parts = dict.fromkeys(
+        p for name in dict.fromkeys(r[0] for r in ordered) for p in _parts(block, name, written, source)
+    )
     return Group(
         ranges=tuple(ordered),
-        parts=parts,
+        parts=tuple(parts),
         assigns=mine,
         bits=sum(msb - lsb + 1 for _, (msb, lsb) in ranges),
         array=any(_variable_word(t) for t in written),
@@ -129,9 +138,17 @@ def _merged(nodes: Iterable[tuple[str, tuple[int, int]]]) -> list[tuple[str, tup
     return merged
 
 
-def _part(block: ClockedBlock, module: Module, name: str, bits: tuple[int, int]) -> Part:
-    variable = module.variables.get(name)
-    source = source_form(name, block.scope)
-    if variable is None or bits == (variable.width - 1, 0):
-        return Part(source)
-    return Part(source, *bits)
+def _parts(block: ClockedBlock, name: str, written: list[Target], source: SourceText) -> Iterator[Part]:
+    """Name what is written of a variable as the source spells it, so that all copies of the block agree."""
+    path = source_form(name, block.scope)
+    targets = [t for t in written if t.variable == name]
+    selects = [_select(source.slice(t.span).decode("latin-1")) for t in targets]
+    if not targets or "" in selects or any(t.index is not Index.CONSTANT for t in targets):
+        yield Part(path)
+    else:
+        yield from (Part(path, select) for select in dict.fromkeys(selects))
+
+
+def _select(text: str) -> str:
+    """Give what follows the name in the text of a target, without spacing."""
+    return "".join(_NAME.sub("", text, count=1).split())

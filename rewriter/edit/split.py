@@ -10,7 +10,7 @@ from rewriter.edit.names import COPY_FORMS, Names
 from rewriter.edit.prune import Pruner, check_separate
 from rewriter.edit.site import source_path
 from rewriter.edit.skeleton import local_declaration
-from rewriter.edit.text import COMMENT, CannotEditError, Page
+from rewriter.edit.text import COMMENT, CannotEditError, Page, renamed
 from rewriter.model.design import ClockedBlock, Module
 from rewriter.model.plan import Bank
 from rewriter.model.source import Span
@@ -121,9 +121,12 @@ class Splitter:
             *self._unused_declarations(pruned, needed),
             *self._macros(),
         ]
-        cuts += self._labels(pruned, self._declarations(needed), stem, names, keep_labels=keep_labels)
+        declared = self._declared(needed)
+        cuts += self._labels(pruned, list(declared.values()), stem, names, keep_labels=keep_labels)
         cuts += [comment for comment in self._comments if not self._moves(comment, cuts)]
         text = applied(self.page, self.block.span, tidied(self.page, self.block.span, cuts))
+        # Text of macros may name the original's temporaries; then the copies keep those names.
+        text = text if "`" in COMMENT.sub("", text) else renamed(text, names.suffixed(declared, "_t"))
         return self.page.newline.join(line for line in text.split(self.page.newline) if line.strip())
 
     def _pruned(self, bank: Bank, needed: frozenset[str]) -> Statement:
@@ -157,13 +160,15 @@ class Splitter:
         targets = (t for s in self.block.body.walk() for t in _blocking_targets(s))
         return frozenset(target.variable for target in targets if target.is_local)
 
-    def _declarations(self, needed: frozenset[str]) -> list[str]:
-        declared = {n for s in self.block.body.walk() if isinstance(s, Block) for d in s.declarations for n in d.names}
-        return [
-            local_declaration(self.module.variables.get(path), path)
+    def _declared(self, needed: frozenset[str]) -> dict[str, str]:
+        """Declare the module's temporaries that a copy computes for itself, by name."""
+        blocks = (s for s in self.block.body.walk() if isinstance(s, Block))
+        own = {name for block in blocks for declaration in block.declarations for name in declaration.names}
+        return {
+            path.rsplit(".", 1)[-1]: local_declaration(self.module.variables.get(path), path)
             for path in sorted(needed - self._local)
-            if path.rsplit(".", 1)[-1] not in declared
-        ]
+            if path.rsplit(".", 1)[-1] not in own
+        }
 
     def _unused_declarations(self, pruned: Statement, needed: frozenset[str]) -> Iterator[Cut]:
         loops = {n for s in pruned.walk() if isinstance(s, Loop) for n in s.outer_variables}
@@ -220,18 +225,7 @@ class Splitter:
     # helpers
 
     def _writes(self, bank: Bank, statement: Assign) -> bool:
-        if statement.blocking:
-            return False
-        return any(self._in_bank(bank, target) for target in statement.targets)
-
-    def _in_bank(self, bank: Bank, target: Target) -> bool:
-        path = source_path(target.variable, self.block.scope)
-        msb, lsb = target.bits
-        return any(
-            part.variable == path and (part.whole or (msb >= part.lsb and lsb <= part.msb))
-            for register in bank.registers
-            for part in register.parts
-        )
+        return not statement.blocking and any(statement.span in proposal.writes for proposal in bank.proposals)
 
     def _is_full(self, case: Case) -> bool:
         """Say whether a tool may take the case to be complete, by attribute or by a comment on its first line."""

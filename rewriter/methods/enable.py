@@ -57,7 +57,8 @@ class _Finder:
     def outcomes(self) -> Iterator[Outcome]:
         """Yield an outcome per register, and an anchor when a part of the block must stay."""
         block_reason = traps.of_block(self.context)
-        for group in groups(self.block, self.context.module):
+        source = self.context.design.source.by_path[self.block.span.file]
+        for group in groups(self.block, self.context.module, source):
             yield self.judge(group, block_reason)
         yield from self.blocking_registers()
         if self.anchored():
@@ -149,5 +150,6 @@ class _Finder:
             conditions=(wake.condition,),
             occurrences=(self.occurrence(group.bits),),
             liveness=wake.liveness,
+            writes=group.spans,
             needs=tuple(sorted(wake.temporaries - self.temporaries.local)),
         )

@@ -13,26 +13,20 @@ from rewriter.model.wake import WakeCondition
 
 @dataclass(frozen=True, order=True)
 class Part:
-    """Some bits of one variable; `variable` is the path in source form, generate indices dropped (`gen.q`).
+    """A variable, or a part of it that is written apart from the rest, in source form.
 
-    The whole variable, however wide a parameter makes it, has msb = lsb = -1; widths stand in Occurrence.
+    Source form is what all copies of a block share: generate indices are dropped from `variable`
+    (`gen.q`), and `select` is the text of the select (`[i]`, `[W-1:8]`, `.valid`), empty for the
+    whole variable. Widths differ between copies; they stand in Occurrence.
     """
 
     variable: str
-    msb: int = -1
-    lsb: int = -1
-
-    @property
-    def whole(self) -> bool:
-        """Say whether this is the whole variable."""
-        return self.msb < 0
+    select: str = ""
 
     @property
     def text(self) -> str:
         """Format for reports: `gen.q` or `gen.q[7:0]`."""
-        if self.whole:
-            return self.variable
-        return f"{self.variable}[{self.msb}]" if self.msb == self.lsb else f"{self.variable}[{self.msb}:{self.lsb}]"
+        return self.variable + self.select
 
 
 @dataclass(frozen=True, order=True)
@@ -85,6 +79,7 @@ class Proposal:
         conditions: possible wake conditions.
         occurrences: all of them, merged over parameterisations and generate indices.
         liveness: of the first condition, over all occurrences.
+        writes: places of its assignments, reset branches included.
         needs: module-level temporaries (variables written with `=` in the block) that a split copy must declare.
     """
 
@@ -96,6 +91,7 @@ class Proposal:
     conditions: tuple[WakeCondition, ...]
     occurrences: tuple[Occurrence, ...]
     liveness: Liveness = Liveness.SOMETIMES
+    writes: frozenset[Span] = frozenset()
     needs: tuple[str, ...] = ()
 
     @property
