@@ -13,22 +13,15 @@ LISTS = Path(__file__).parent / "lists"
 SITE = Path(sysconfig.get_path("purelib"))
 
 _LOGIK = "pip install --no-deps logikbench lambdalib"  # without --no-deps it pulls in an old pyslang
-_INSTALL = {
-    "pythondata_cpu_picorv32": "pip install pythondata-cpu-picorv32",
-    "pythondata_cpu_vexriscv": "pip install pythondata-cpu-vexriscv",
-    "pythondata_cpu_ibex": "pip install pythondata-cpu-ibex",
-    "pythondata_cpu_cv32e40p": "pip install pythondata-cpu-cv32e40p",
-    "pythondata_cpu_cv32e40x": "pip install pythondata-cpu-cv32e40x",
-    "logikbench": _LOGIK,
-    "lambdalib": _LOGIK,
-}
+_INSTALL = {"logikbench": _LOGIK, "lambdalib": _LOGIK}  # the others install under their own names
 
 
 class MissingPackageError(AssertionError):
     """Fail a test whose design is not installed, and say how to install it."""
 
     def __init__(self, package: str) -> None:
-        super().__init__(f"the package {package} is not installed; run: {_INSTALL[package]}")
+        way = _INSTALL.get(package, f"pip install {package.replace('_', '-')}")
+        super().__init__(f"the package {package} is not installed; run: {way}")
         self.package = package
 
 
