@@ -3,6 +3,7 @@
 import re
 from collections.abc import Callable, Iterator, Mapping
 from dataclasses import dataclass
+from itertools import groupby
 
 from rewriter.edit.formula import FormulaWriter, bracketed
 from rewriter.edit.prune import ends_open
@@ -10,6 +11,8 @@ from rewriter.edit.text import WIDTH, Page, copied, indented
 from rewriter.model.source import Span
 from rewriter.model.statement import Assign, Block, Case, CaseItem, Empty, If, Loop, Statement
 from rewriter.model.wake import Leaf
+
+_FEWEST = 3  # items that wake are joined from this number on
 
 
 @dataclass(frozen=True)
@@ -85,14 +88,22 @@ class Printer:
     def _print_case(self, statement: Case) -> list[str]:
         head = re.sub(r"\A(?:unique0?|priority)\s+", "", copied(self.page.text(statement.head)))
         lines: list[str] = []
-        for run in runs(statement.items):
+        for run in runs(statement.items, self._alike):
             if len(run) > 1:
-                lines += indented(merged_labels([self._label(item) for item in run], self.step), self.step)
+                (body,) = self.lines(run[0].body)
+                lines += indented(merged_labels([self._label(item) for item in run], body, self.step), self.step)
             else:
                 lines += indented(self._attached(self._label(run[0]) + ":", run[0].body), self.step)
         if self.complete and not any(item.is_default for item in statement.items):
             lines.append(f"{self.step}default: ;")
         return [head, *lines, "endcase"]
+
+    def _alike(self, item: CaseItem) -> str:
+        """Say what an item does, if it may share its line with neighbours."""
+        if item.is_default:
+            return ""
+        leaf = self.leaves.get(item.body.span)
+        return "wakes" if leaf and leaf.condition is None else idle(item)
 
     def _label(self, item: CaseItem) -> str:
         text = copied(self.page.text(item.head)).rstrip()
@@ -109,29 +120,29 @@ class Printer:
         return [head, *indented(lines, self.step)]
 
 
-def runs(items: tuple[CaseItem, ...]) -> Iterator[tuple[CaseItem, ...]]:
-    """Group neighbouring empty items (not the default), which can share one `;`; others come alone."""
-    run: list[CaseItem] = []
-    for item in items:
-        if isinstance(item.body, Empty) and not item.is_default:
-            run.append(item)
-            continue
-        if run:
-            yield tuple(run)
-            run = []
-        yield (item,)
-    if run:
-        yield tuple(run)
+def idle(item: CaseItem) -> str:
+    """Say whether an item does nothing, so that it may share its `;` with neighbours."""
+    return "idle" if isinstance(item.body, Empty) and not item.is_default else ""
 
 
-def merged_labels(labels: list[str], step: str) -> list[str]:
+def runs(items: tuple[CaseItem, ...], alike: Callable[[CaseItem], str] = idle) -> Iterator[tuple[CaseItem, ...]]:
+    """Group neighbouring items that do the same; two that wake keep their lines, as the original has them."""
+    for word, group in groupby(items, alike):
+        run = tuple(group)
+        if word == "idle" or (word and len(run) >= _FEWEST):
+            yield run
+        else:
+            yield from ((item,) for item in run)
+
+
+def merged_labels(labels: list[str], body: str, step: str) -> list[str]:
     """Write `a, b, c: ;`, on several lines if it is long."""
     lines = [labels[0]]
     for label in labels[1:]:
-        if len(lines[-1]) + len(label) < WIDTH - 20:
+        if len(lines[-1]) + len(label) + len(body) < WIDTH - 20:
             lines[-1] += f", {label}"
         else:
             lines[-1] += ","
             lines.append(step + label)
-    lines[-1] += ": ;"
+    lines[-1] += f": {body}"
     return lines

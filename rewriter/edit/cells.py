@@ -58,7 +58,7 @@ def _render(cell_map: CellMap, edge: Edge, timescale: str | None) -> str:
         edge=edge.value,
         kind=cell_map.kind.value,
         cell=cell_map.cell(edge),
-        map_name=Path(cell_map.name).name,
+        map_name="".join(c for c in Path(cell_map.name).name if c.isprintable()),  # it goes into a comment
         description=cell_map.description,
         needs_map=NEEDS_MAP,
         timescale=timescale,
@@ -66,19 +66,24 @@ def _render(cell_map: CellMap, edge: Edge, timescale: str | None) -> str:
 
 
 def _read_file(path: str) -> str:
-    if not path or not Path(path).exists():
-        near = difflib.get_close_matches(path, shipped_maps(), 1)
-        guess = f"did you mean `{near[0]}`? " if near else ""
-        names = ", ".join(shipped_maps())
-        raise UserError(
-            f"there is no cell map `{path}`", help=f"{guess}give the path of a TOML file, or one of {names}"
-        )
     try:
-        return Path(path).read_text(encoding="utf-8")
+        # An empty path would be the working folder.
+        return Path(path).read_text(encoding="utf-8") if path else _unknown(path)
+    except FileNotFoundError:
+        _unknown(path)
     except UnicodeDecodeError:
         raise UserError(f"{path}: not a text file", help="a cell map is a TOML file in UTF-8") from None
     except OSError as error:
         raise UserError(f"{path}: {error.strerror}", help="give the path of a TOML file that can be read") from None
+
+
+def _unknown(path: str) -> NoReturn:
+    near = difflib.get_close_matches(path, shipped_maps(), 1)
+    guess = f"did you mean `{near[0]}`? " if near else ""
+    names = ", ".join(shipped_maps())
+    raise UserError(
+        f"there is no cell map `{path}`", help=f"{guess}give the path of a TOML file, or one of {names}"
+    ) from None
 
 
 @dataclass(frozen=True)

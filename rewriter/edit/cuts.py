@@ -11,6 +11,8 @@ from rewriter.model.statement import Block, Case, CaseItem, Empty, If, Loop, Sta
 
 _LINE_COMMENT = re.compile(r"[ \t]*(?://.*|/\*[^\n]*?\*/[ \t]*)\r?\Z")
 _AFTER = re.compile(r"[ \t]*(?://.*|/\*[^\n]*?\*/[ \t]*)?\r?\Z")
+_OPENS = re.compile(r"\bbegin(?:[ \t]*:[ \t]*\w+)?[ \t]*(?://.*)?\r?\n?\Z")
+_CLOSES = re.compile(r"[ \t]*end")
 
 
 @dataclass(frozen=True, order=True)
@@ -82,7 +84,7 @@ def _merged(page: Page, run: tuple[CaseItem, ...], step: str) -> str:
     labels = [copied(page.text(item.head)).rstrip().removesuffix(":").rstrip() for item in run]
     labels = [label + " " if re.search(r"\\\S+\Z", label) else label for label in labels]
     indent = page.indent(run[0].span.start)
-    return (page.newline + indent).join(merged_labels(labels, step))
+    return (page.newline + indent).join(merged_labels(labels, ";", step))
 
 
 def _gone(span: Span) -> Cut:
@@ -117,11 +119,23 @@ def _widened(page: Page, within: Span, cut: Cut) -> Cut:
     prefix, suffix = page.data[line : cut.start], page.data[cut.end : end]
     if not prefix.strip() and line > within.start:
         if _AFTER.fullmatch(suffix) and end < within.end:
-            return Cut(line, end + 1)
+            return _without_blanks(page, within, Cut(line, end + 1))
         return Cut(cut.start, cut.end + len(suffix) - len(suffix.lstrip(" \t")))
     if not suffix.strip() or suffix.lstrip().startswith(("//", "/*")):
         return Cut(cut.start - (len(prefix) - len(prefix.rstrip(" \t"))), cut.end)
     return Cut(cut.start, cut.end + len(suffix) - len(suffix.lstrip(" \t")))
+
+
+def _without_blanks(page: Page, within: Span, cut: Cut) -> Cut:
+    """Take a blank line along when whole lines go and it would end up doubled or at the edge of its block."""
+    above = page.data[page.data.rfind("\n", 0, cut.start - 1) + 1 : cut.start]
+    below = page.data[cut.end : page.data.find("\n", cut.end) + 1]
+    before = page.data[: cut.start - len(above)]
+    if not below.strip() and (not above.strip() or _OPENS.search(above)) and cut.end + len(below) < within.end:
+        return Cut(cut.start, cut.end + len(below))
+    if _CLOSES.match(below) and not above.strip() and len(before) > within.start:
+        return Cut(cut.start - len(above), cut.end)
+    return cut
 
 
 def _disjoint(cuts: list[Cut]) -> list[Cut]:

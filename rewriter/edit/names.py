@@ -61,6 +61,19 @@ class Names:
                 return name
             number += 1
 
+    def suffixed(self, names: Iterable[str], suffix: str) -> dict[str, str]:
+        """Map names to new ones that nothing else in the definition has, all with one suffix.
+
+        Local variables that bear the name of an outer one make lint tools complain.
+        """
+        wanted = sorted(set(names))
+        number = 1
+        while True:
+            end = suffix if number == 1 else f"{suffix}{number}"
+            if not {name + end for name in wanted} & self._taken:
+                return {name: name + end for name in wanted}
+            number += 1
+
 
 def common_free(name: str, identifiers: Iterable[frozenset[str]]) -> str:
     """Give `name`, or `name_2`, … such that it is free in every one of several definitions."""

@@ -91,7 +91,7 @@ class Site:
         stem = self.stems[cell.id]
         language = self.definition(cell.definition).language
         wake = self._own_condition(cell, bank)
-        body, text = self._wake_lines(wake, bank, stem, language, step)
+        body, text, branches = self._wake_lines(wake, bank, stem, language, step)
         instance = f"u_icg_{stem}"
         pins = {
             PORTS.clock: self._clock(cell, bank),
@@ -104,7 +104,7 @@ class Site:
             cell.id, cell.definition, cell.scope, instance, f"wake_{stem}", f"gclk_{stem}", text
         )
         return [
-            self._comment(cell),
+            self._comment(cell, branches=branches),
             *body,
             f"wire gclk_{stem};",
             f"{WRAPPERS[cell.edge]} {instance} ({connections});",
@@ -117,14 +117,17 @@ class Site:
 
     def _wake_lines(
         self, wake: WakeCondition, bank: Bank, stem: str, language: Language, step: str
-    ) -> tuple[list[str], str]:
+    ) -> tuple[list[str], str, bool]:
+        """Give the lines of the wake signal, its condition for reports, and whether it is a copy of branches."""
         if not isinstance(wake.form, Skeleton):
             text = self.formulas.write(wake.form)
-            return wrapped(f"wire wake_{stem} =", text, step), text
+            return wrapped(f"wire wake_{stem} =", text, step), text, False
         module, block = self.body_of(bank)
         page = self.page(block.span.file)
-        writer = SkeletonWriter(page, module, block, self.formulas, wake, wake.form, stem, step)
-        return writer.lines(language), wake.text
+        names = self.names_of(bank.block.definition)
+        writer = SkeletonWriter(page, module, block, self.formulas, wake, wake.form, stem, names, step)
+        lines = writer.lines(language)
+        return (lines, lines[0].partition(" = ")[2].rstrip(";"), False) if writer.is_formula else (lines, wake.text, True)
 
     def _clock(self, cell: Cell, bank: Bank) -> str:
         if isinstance(cell.clock, CellRef):
@@ -136,10 +139,10 @@ class Site:
             raise CannotEditError("not-copyable", "the clock comes out of a macro", block.clock.signal.span)
         return copied(self.page(block.span.file).text(block.clock.signal.span))
 
-    def _comment(self, cell: Cell) -> str:
+    def _comment(self, cell: Cell, *, branches: bool) -> str:
         mine = [bank for bank in self.plan.banks if bank.cell == cell.id]
         names = list(dict.fromkeys(_shown(register.name) for bank in mine for register in bank.registers))
-        tail = "; the branches are those of its block" if isinstance(cell.wake.form, Skeleton) else ""
+        tail = "; the branches are those of its block" if branches else ""
         return f"// stillclock: {_sleepers(names)}{tail}"
 
 

@@ -5,20 +5,19 @@ from dataclasses import dataclass, replace
 from functools import cached_property
 
 from rewriter.edit.branches import Printer
-from rewriter.edit.formula import FormulaWriter
-from rewriter.edit.names import is_plain
+from rewriter.edit.formula import FormulaWriter, wrapped
+from rewriter.edit.names import Names, is_plain
 from rewriter.edit.prune import Pruner, check_separate
-from rewriter.edit.text import WIDTH, CannotEditError, Page, copied, indented
+from rewriter.edit.text import WIDTH, CannotEditError, Page, copied, indented, renamed, words
 from rewriter.model.design import ClockedBlock, Language, Module, Variable
 from rewriter.model.source import Span
 from rewriter.model.statement import Assign, Block, Case, If, Loop, Statement
-from rewriter.model.wake import Leaf, Skeleton, WakeCondition
+from rewriter.model.wake import Always, And, Atom, Formula, Leaf, Skeleton, WakeCondition
 
 _INTEGRAL = re.compile(
     r"(?:(?:input|output|inout)\s+)?(?:wire|reg|logic|bit|tri)?\s*(?P<sign>signed|unsigned)?\s*(?P<dims>(?:\[.*\])?)\s*\Z",
     re.DOTALL,
 )
-_WORD = re.compile(r"(?<![\w$.`\\])[A-Za-z_][\w$]*")
 
 
 @dataclass(frozen=True)
@@ -30,6 +29,7 @@ class SkeletonWriter:
         module, block: a body that holds the block.
         formulas: writes the conditions of leaves.
         name: stem of inserted names; the signal is `wake_NAME`.
+        names: of the definition.
         step: one step of indentation.
     """
 
@@ -40,6 +40,7 @@ class SkeletonWriter:
     wake: WakeCondition
     skeleton: Skeleton
     name: str
+    names: Names
     step: str
 
     @property
@@ -53,22 +54,51 @@ class SkeletonWriter:
         Raises:
             CannotEditError: `not-copyable`, `inside-macro`.
         """
+        if (formula := self._as_formula(self._tree)) is not None:
+            return wrapped(f"wire {self.signal} =", self.formulas.write(formula), self.step)
         return self._function() if language is Language.VERILOG else self._always_comb()
+
+    @property
+    def is_formula(self) -> bool:
+        """Say whether so little is left of the branches that one expression says it."""
+        return self._as_formula(self._tree) is not None
+
+    def _as_formula(self, statement: Statement) -> Formula | None:
+        """Read a formula off nested `if`s without `else` around one leaf."""
+        if statement.span in self._leaves:
+            return self._leaves[statement.span].condition or Always()
+        if not isinstance(statement, If) or statement.other:
+            return None
+        inner = self._as_formula(statement.then)
+        outer = Atom(statement.condition)
+        return inner and (outer if isinstance(inner, Always) else And((outer, inner)))
 
     def _always_comb(self) -> list[str]:
         branches = self._branches(self.signal, complete=True)
-        declared = [*self._declarations(branches), f"{self.signal} = 1'b0;", *branches]
-        named = f" : {self.signal}_branches" if len(declared) > len(branches) + 1 else ""
-        return [f"logic {self.signal};", f"always_comb begin{named}", *indented(declared, self.step), "end"]
+        locals_ = self._own_names(branches, [], "_t")
+        declared = [*self._hoisted(branches), *self._temporaries(branches)]
+        named = f" : {self.signal}_branches" if declared else ""
+        body = [renamed(line, locals_) for line in (*declared, f"{self.signal} = 1'b0;", *branches)]
+        return [f"logic {self.signal};", f"always_comb begin{named}", *indented(body, self.step), "end"]
 
     def _function(self) -> list[str]:
         function = f"{self.signal}_f"
         branches = self._branches(function, complete=False)
         arguments = self._arguments(branches)
+        inputs = self._own_names(branches, [a.name for a in arguments], "_i")
+        declared = [*self._hoisted(branches), *self._temporaries(branches)]
         body = ["begin", *indented([f"{function} = 1'b0;", *branches], self.step), "end"]
-        head = _broken(f"function {function} (", _grouped(arguments), ");", self.step)
-        call = _broken(f"wire {self.signal} = {function}(", [name for name, _ in arguments], ");", self.step)
-        return [*head, *indented([*self._declarations(branches), *body], self.step), "endfunction", *call]
+        inside = [renamed(line, inputs) for line in (*declared, *body)]
+        kinds = [(inputs.get(a.name, a.name), a.kind) for a in arguments]
+        head = _broken(f"function {function} (", _grouped(kinds), ");", self.step)
+        call = _broken(f"wire {self.signal} = {function}(", [a.passed for a in arguments], ");", self.step)
+        return [*head, *indented(inside, self.step), "endfunction", *call]
+
+    def _own_names(self, branches: list[str], passed: list[str], suffix: str) -> dict[str, str]:
+        """Give the copy's variables names of their own; text of macros names the original's, so it forbids that."""
+        if any("`" in line for line in branches):
+            return {}
+        return self.names.suffixed([*passed, *self._written(branches)], suffix)
 
     def _branches(self, target: str, *, complete: bool) -> list[str]:
         def label(block: Block) -> str:
@@ -136,35 +166,43 @@ class SkeletonWriter:
             case _:
                 return statement
 
-    def _declarations(self, branches: list[str]) -> list[str]:
-        """Declare the temporaries and loop variables that the copy writes, and what the outermost block declared."""
-        words = {word for line in branches for word in _WORD.findall(line)}
+    def _hoisted(self, branches: list[str]) -> list[str]:
+        """Give the declarations of the outermost block that the copy needs."""
         outer = self._synchronous
+        used = words("\n".join(branches))
         hoisted = outer.declarations if isinstance(outer, Block) else ()
-        lines = [copied(self.page.text(d.span)) for d in hoisted if words & set(d.names)]
-        local = {name for inner in self.block.body.walk() if isinstance(inner, Block) for name in _declared(inner)}
-        loops = [n for inner in self._tree.walk() if isinstance(inner, Loop) for n in inner.outer_variables]
-        for path in dict.fromkeys((*self.skeleton.temporaries, *loops)):
-            name = _simple(path)
-            if name in words and name not in local:
-                lines.append(local_declaration(self.module.variables.get(path), path))
-        return lines
+        return [copied(self.page.text(d.span)) for d in hoisted if used & set(d.names)]
+
+    def _temporaries(self, branches: list[str]) -> list[str]:
+        """Declare the module's temporaries and loop variables that the copy writes."""
+        return [local_declaration(self.module.variables.get(path), path) for path in self._written(branches).values()]
+
+    def _written(self, branches: list[str]) -> dict[str, str]:
+        """Give the variables of the module that the copy writes, by name."""
+        used = words("\n".join(branches))
+        blocks = (inner for inner in self.block.body.walk() if isinstance(inner, Block))
+        local = {name for inner in blocks for declaration in inner.declarations for name in declaration.names}
+        loops = (n for inner in self._tree.walk() if isinstance(inner, Loop) for n in inner.outer_variables)
+        found = {_simple(path): path for path in (*self.skeleton.temporaries, *loops)}
+        return {name: path for name, path in sorted(found.items()) if name in used and name not in local}
 
     def _declared_at(self, path: str) -> tuple[str, int, str]:
         """Order variables as the text declares them."""
         variable = self.module.variables.get(path)
         return (variable.span.file, variable.span.start, path) if variable else ("", 0, path)
 
-    def _arguments(self, branches: list[str]) -> list[tuple[str, str]]:
-        """Give the name and the type of every variable that the function reads."""
-        words = {word for line in branches for word in _WORD.findall(line)}
+    def _arguments(self, branches: list[str]) -> list["_Argument"]:
+        """Give an argument for every variable that the function reads."""
+        used = words("\n".join(branches))
         found = {_simple(path): path for path in sorted(self.wake.reads)}
         if len(found) < len(self.wake.reads):
             raise CannotEditError("not-copyable", "two variables of one name are read", self.block.span)
         names = sorted(found, key=lambda name: self._declared_at(found[name]))
         macros = any("`" in line for line in branches)
         arguments = [
-            (name, _input(self.module.variables.get(found[name]), name)) for name in names if macros or name in words
+            _narrowed(name, _input(self.module.variables.get(found[name]), name), branches)
+            for name in names
+            if macros or name in used
         ]
         if not arguments:
             raise CannotEditError("not-copyable", "the branches read no variable", self.block.span)
@@ -204,10 +242,6 @@ def _plain(statement: Statement) -> Statement:
             return statement
 
 
-def _declared(block: Block) -> tuple[str, ...]:
-    return tuple(name for declaration in block.declarations for name in declaration.names)
-
-
 def _simple(path: str) -> str:
     name = path.rsplit(".", 1)[-1]
     if not is_plain(name):
@@ -227,6 +261,27 @@ def _input(variable: Variable | None, name: str) -> str:
         raise CannotEditError("not-copyable", f"{name} cannot be an argument of a Verilog function: {text}")
     sign = "signed" if found["sign"] == "signed" else ""
     return " ".join(part for part in (sign, found["dims"].strip()) if part)
+
+
+@dataclass(frozen=True)
+class _Argument:
+    """An argument of a function: its name, its type, and what is passed."""
+
+    name: str
+    kind: str
+    passed: str
+
+
+def _narrowed(name: str, kind: str, branches: list[str]) -> _Argument:
+    """Pass only the bits that are read, under their own indices: lint tools complain about the others."""
+    code = "\n".join(branches)
+    uses = len(re.findall(rf"(?<![\w$`]){name}\b", code))
+    selects = re.findall(rf"(?<![\w$`]){name}\s*\[\s*(\d+)\s*(?::\s*(\d+)\s*)?\]", code)
+    if "`" in code or not re.fullmatch(r"(?:signed )?\[[^\[\]]*:\s*0\s*\]", kind) or not uses or len(selects) < uses:
+        return _Argument(name, kind, name)
+    bits = [int(index) for pair in selects for index in pair if index]
+    part = f"[{max(bits)}:{min(bits)}]"
+    return _Argument(name, kind, name) if kind == part else _Argument(name, part, f"{name}{part}")
 
 
 def _grouped(arguments: list[tuple[str, str]]) -> list[str]:

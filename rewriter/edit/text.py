@@ -1,6 +1,7 @@
 """Source text as characters that map one to one to bytes, and what may be copied from it."""
 
 import re
+from collections.abc import Mapping
 from dataclasses import dataclass
 from functools import cached_property
 
@@ -18,6 +19,13 @@ DIRECTIVE = re.compile(
 )
 COMMENT = re.compile(r"//[^\n]*|/\*.*?\*/", re.DOTALL)
 LEXEMES = re.compile(r"(?P<comment>//[^\r\n]*|/\*.*?\*/)|(?P<string>\"(?:\\.|[^\"\\])*\")|(?P<escaped>\\[^\s]+)", re.DOTALL)
+
+
+_WORDS = re.compile(
+    LEXEMES.pattern + r"|(?P<macro>`[\w$]+)|(?P<number>'[sS]?[bBoOdDhH]\s*[\w?]+)|(?P<member>(?:\.|::)\s*[A-Za-z_][\w$]*)"
+    r"|(?P<word>[A-Za-z_$][\w$]*)",
+    re.DOTALL,
+)
 
 
 class CannotEditError(Exception):
@@ -104,6 +112,16 @@ def copied(text: str) -> str:
     lines = [line.strip() for line in re.split(r"[ \t\r\f]*\\?\n[ \t\r\f]*", plain)]
     joined = " ".join(line for line in lines if line)
     return joined + " " if re.search(r"\\\S+\Z", joined) else joined
+
+
+def words(text: str) -> frozenset[str]:
+    """Give the names in a piece of source: no comments, strings, numbers, members or macros."""
+    return frozenset(found["word"] for found in _WORDS.finditer(text) if found["word"])
+
+
+def renamed(text: str, names: Mapping[str, str]) -> str:
+    """Replace names in a piece of source."""
+    return _WORDS.sub(lambda found: names.get(found["word"], found["word"]) if found["word"] else found[0], text)
 
 
 def indented(lines: list[str], step: str) -> list[str]:
