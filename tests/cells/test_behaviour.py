@@ -180,6 +180,13 @@ def test_verilator_agrees(tmp_path: Path, edge: Edge) -> None:
     assert re.search(rf"^stillclock-count \S*dut {found[1]}$", printed, re.MULTILINE)
 
 
+@pytest.mark.slow
+def test_verilator_resets_a_sleeping_bank(tmp_path: Path) -> None:
+    files = write(tmp_path, wrapper("behavioural", Edge.RISING) | bench("reset_styles.sv"))
+    printed = verilator(tmp_path, "reset_styles", files)
+    assert len(re.findall(r"^reset \d clock \d bad 0 unknown 0$", printed, re.MULTILINE)) == 16
+
+
 @pytest.mark.parametrize("name, edge", [*WRITTEN, ("transparent", Edge.RISING), ("transparent", Edge.FALLING)])
 def test_wrapper_is_verilog_2001(tmp_path: Path, name: str, edge: Edge) -> None:
     """Icarus reads every wrapper and model with -g2001, as Verilog-2001 (IEEE 1364-2001)."""

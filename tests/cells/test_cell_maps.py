@@ -69,6 +69,16 @@ def test_map_of_ones_own(tmp_path: Path) -> None:
     assert str(tmp_path) not in text
 
 
+def test_name_of_the_file_cannot_leave_its_comment(tmp_path: Path) -> None:
+    path = tmp_path / "my\nmodule evil; endmodule.toml"
+    path.parent.mkdir(parents=True, exist_ok=True)
+    path.write_text(GOOD, encoding="utf-8")
+    lines = render_cells(load_cell_map(str(path)), None)[FILES[Edge.RISING]].split("\n")
+    assert [line for line in lines if line.startswith("module")] == [
+        "module stillclock_icg (input wire clk, input wire wake, input wire test, output wire gclk);"
+    ]
+
+
 WRONG = {
     "unknown name": (
         GOOD.replace("enable =", "enabel ="),
