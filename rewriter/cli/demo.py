@@ -42,7 +42,9 @@ def _copy(folder: Traversable, target: Path) -> None:
             if item.is_file():
                 (target / item.name).write_bytes(item.read_bytes())
     except OSError as error:
-        raise UserError(f"{target}: cannot be written: {error.strerror}", help="name another folder with --out") from None
+        raise UserError(
+            f"{target}: cannot be written: {error.strerror}", help="name another folder with --out"
+        ) from None
 
 
 def _step(name: str, *arguments: str) -> None:

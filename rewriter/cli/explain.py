@@ -18,10 +18,10 @@ _GROUPS = (
 
 
 @click.command("explain", short_help="Say what a word of the reports means.")
-@click.argument("word", required=False)
-def command(word: str | None) -> None:
+@click.argument("word", nargs=-1)
+def command(word: tuple[str, ...]) -> None:
     """Say what a reason, method or evidence means, and what to do; without a WORD, list them all."""
-    console.result(_list() if word is None else _page(_find(word)))
+    console.result(_page(_find(" ".join(word))) if word else _list())
 
 
 def _find(word: str) -> ReasonPage:

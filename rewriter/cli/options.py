@@ -6,6 +6,7 @@ from typing import Any, TypedDict
 
 import click
 
+from rewriter.edit.cells import load_cell_map
 from rewriter.flow import Job
 from rewriter.model.cells import CellMap
 from rewriter.model.evidence import Limits
@@ -35,45 +36,28 @@ _PIN = re.compile(r"(?P<module>[^=.\s]+)\.(?P<port>[^=.\s]+)=(?P<meaning>scan-en
 _NAME = re.compile(r"[A-Za-z_][A-Za-z0-9_$]*\Z")
 
 
-class TestPinType(click.ParamType):
+def _test_pins(ctx: click.Context, param: click.Parameter, value: tuple[str, ...]) -> tuple[TestPin, ...]:
     """Read `MODULE.PORT=scan-enable|test-mode[,active-low]`."""
-
-    __test__ = False
-    name = "pin"
-
-    def convert(self, value: object, param: click.Parameter | None, ctx: click.Context | None) -> TestPin:
-        """Give the pin, or complain with the form."""
-        if isinstance(value, TestPin):
-            return value
-        found = _PIN.match(str(value))
-        if found is None:
-            self.fail(f"`{value}` is not MODULE.PORT=scan-enable|test-mode[,active-low]", param, ctx)
-        return TestPin(found["module"], found["port"], found["meaning"], active_low=found["low"] is not None)
+    return tuple(_test_pin(text, ctx, param) for text in value)
 
 
-class PortNameType(click.ParamType):
-    """Read the name of a port to add."""
-
-    name = "name"
-
-    def convert(self, value: object, param: click.Parameter | None, ctx: click.Context | None) -> str:
-        """Give the name, or say what a name is."""
-        if not _NAME.match(str(value)):
-            self.fail(f"`{value}` is not a plain Verilog name (letters, digits, _ and $)", param, ctx)
-        return str(value)
+def _test_pin(text: str, ctx: click.Context, param: click.Parameter) -> TestPin:
+    found = _PIN.match(text)
+    if found is None:
+        raise click.BadParameter(f"`{text}` is not MODULE.PORT=scan-enable|test-mode[,active-low]", ctx, param)
+    return TestPin(found["module"], found["port"], found["meaning"], active_low=found["low"] is not None)
 
 
-class CellMapType(click.ParamType):
-    """Read a cell map by shipped name or path."""
+def _port_name(ctx: click.Context, param: click.Parameter, value: str) -> str:
+    if not _NAME.match(value):
+        raise click.BadParameter(f"`{value}` is not a plain Verilog name (letters, digits, _ and $)", ctx, param)
+    return value
 
-    name = "map"
 
-    def convert(self, value: object, param: click.Parameter | None, ctx: click.Context | None) -> CellMap:
-        """Give the map; the reader of maps complains with line and column."""
-        from rewriter.edit.cells import load_cell_map  # noqa: PLC0415 (commands that need no map start faster)
-
-        del param, ctx
-        return value if isinstance(value, CellMap) else load_cell_map(str(value))
+def _cell_map(ctx: click.Context, param: click.Parameter, value: str) -> CellMap:
+    """Read a cell map by shipped name or path; its reader complains with line and column."""
+    del ctx, param
+    return load_cell_map(value)
 
 
 def format_option(command: Command) -> Command:
@@ -116,7 +100,7 @@ def gating_options(command: Command) -> Command:
     options = (
         click.option(
             "--cell-map",
-            type=CellMapType(),
+            callback=_cell_map,
             default="behavioural",
             show_default=True,
             metavar="FILE|NAME",
@@ -131,15 +115,14 @@ def gating_options(command: Command) -> Command:
         ),
         click.option(
             "--test-port",
-            type=PortNameType(),
+            callback=_port_name,
             default="test_en",
             show_default=True,
             help="Name of the port that carries the test override.",
         ),
         click.option(
             "--test-pin",
-            "test_pins",
-            type=TestPinType(),
+            callback=_test_pins,
             multiple=True,
             metavar="MODULE.PORT=MEANING[,active-low]",
             help="An existing port that carries the override; MEANING is scan-enable or test-mode. Repeatable.",

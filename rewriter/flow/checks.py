@@ -68,7 +68,7 @@ def check(run: Run, done: Rewrite, choose: Callable[[Design], Plan]) -> None:
     if not done.files:
         return
     try:
-        again = frontend.read_source(rewritten_source(run.design, done))
+        again = frontend.elaborate(rewritten_source(run.design, done))
     except UserError as error:
         raise _fault(run, f"the rewritten RTL does not compile:\n{error.message}") from error
     if new := _new_warnings(run.design, again):
@@ -76,7 +76,7 @@ def check(run: Run, done: Rewrite, choose: Callable[[Design], Plan]) -> None:
     known = {_name(register) for register in run.excluded}
     for bank in choose(again).banks:
         if any(_name(register) not in known for register in bank.registers):
-            raise _fault(run, f"a second run would gate {bank.block.definition}.{bank.name} once more")
+            raise _fault(run, f"a second run would gate {bank.name} once more")
 
 
 def _new_warnings(before: Design, after: Design) -> list[str]:

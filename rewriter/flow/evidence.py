@@ -63,7 +63,7 @@ def rejection_warnings(run: Run, back: Mapping[RegisterId, Reason]) -> Iterator[
         if reason is None:
             continue
         tables = [e.counterexample.table() for e in run.evidence.get(bank.cell, ()) if e.counterexample]
-        head = f"bank {_name(bank)} is left out, {reason.word}" + (f": {reason.detail}" if reason.detail else "")
+        head = f"bank {bank.name} is left out, {reason.word}" + (f": {reason.detail}" if reason.detail else "")
         yield Note("\n".join((head, *tables[:1])), help=_way_out(bank, reason))
 
 
@@ -76,12 +76,12 @@ def _way_out(bank: Bank, reason: Reason) -> str:
 
 def waived(run: Run) -> Iterator[Note]:
     """Say loudly what is gated without proof."""
+    by_kind: dict[EvidenceKind, list[str]] = {}
     for bank in run.unproved_banks:
+        by_kind.setdefault(run.kind(bank.cell), []).append(bank.name)
+    for kind, names in by_kind.items():
+        count = "1 bank is" if len(names) == 1 else f"{len(names)} banks are"
         yield Note(
-            f"bank {_name(bank)} is gated WITHOUT PROOF ({run.kind(bank.cell).value})",
-            help="run `stillclock prove` before you rely on it",
+            f"{count} gated WITHOUT PROOF ({kind.value}): {', '.join(names)}",
+            help="run `stillclock prove` before you rely on the rewrite",
         )
-
-
-def _name(bank: Bank) -> str:
-    return f"{bank.block.definition}.{bank.name}"

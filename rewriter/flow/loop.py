@@ -15,7 +15,7 @@ from rewriter.model.design import Design, Edge
 from rewriter.model.errors import UserError
 from rewriter.model.evidence import ProofJob
 from rewriter.model.plan import Plan, Policy, RegisterId, Settled
-from rewriter.model.reasons import Reason
+from rewriter.model.reasons import Reason, Verdict
 from rewriter.model.rewrite import Rewrite
 from rewriter.model.run import Run
 from rewriter.plan import choose, settle
@@ -29,6 +29,7 @@ def survey(job: Job, progress: Progress) -> Run:
     watch = StopWatch(progress)
     design, settled = _find(job, watch)
     excluded = switched_off(job.off, settled)
+    settled = _without(settled, excluded)
     plan = _choose(settled, job, excluded)
     return Run(design, settled, plan, excluded=excluded, warnings=design.warnings, seconds=watch.seconds)
 
@@ -45,6 +46,7 @@ def rewrite(job: Job, progress: Progress) -> Run:
     design, settled = _find(job, watch)
     wishes = EditOptions(job.test_port, job.test_pins, render_cells(job.cell_map, _timescale(design)))
     excluded = switched_off(job.off, settled)
+    settled = _without(settled, excluded)
     warnings = list(design.warnings)
     while True:
         plan = _choose(settled, job, excluded)
@@ -131,6 +133,15 @@ def switched_off(names: tuple[str, ...], settled: Settled) -> dict[RegisterId, R
             )
         found |= {register: Reason("switched-off", f"--off {name}") for register in fitting}
     return found
+
+
+def _without(settled: Settled, off: Mapping[RegisterId, Reason]) -> Settled:
+    """Turn refusals of switched-off registers into registers that are left: their user has answered."""
+    refusals = tuple(
+        replace(found, verdict=Verdict.LEFT, reason=off[found.register]) if found.register in off else found
+        for found in settled.refusals
+    )
+    return replace(settled, refusals=refusals)
 
 
 def _off_names(register: RegisterId) -> set[str]:

@@ -10,7 +10,7 @@ from functools import cached_property
 from rewriter.model.rewrite import Rewrite
 from rewriter.model.source import RtlSource, SourceText
 
-_INCLUDE = re.compile(rb"`include\b[ \t]*(?:\"(?P<quoted>[^\"\n]*)\"|<(?P<angled>[^>\n]*)>|(?P<macro>`\w+))?")
+_INCLUDE = re.compile(rb"`include\b[ \t]*(?:\"(?P<quoted>[^\"\n]*)\"|<(?P<angled>[^>\n]*)>|(?P<macro>`\w+))")
 
 
 @dataclass(frozen=True)

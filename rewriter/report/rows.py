@@ -186,7 +186,7 @@ class _Maker:
         event = block.clock if (block := self._blocks.get(register.block.span)) else None
         occurrences = tuple(OccurrenceRow(o.module, o.scope, o.instances, o.bits) for o in refusal.occurrences)
         return BankRow(
-            name=register.name,
+            name=f"{register.block.definition}.{register.name}",
             module=register.block.definition,
             where=self._where(register),
             registers=_names((register,)),

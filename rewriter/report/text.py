@@ -10,8 +10,10 @@ from rewriter.model.run import Run
 from rewriter.report.rows import BankRow, CellRow, Rows, Where, rows
 
 WIDTH = 100
-_NAMES = 30  # widest column of names
+_NAMES = 36  # widest column of names
 _PLACES = 24  # widest column of places
+
+_SHOWN = 12  # registers listed per reason
 
 Style = Callable[[str], str]
 
@@ -85,7 +87,13 @@ def _by_reason(found: Sequence[BankRow]) -> list[list[BankRow]]:
 
 
 def _reason_lines(group: Sequence[BankRow]) -> list[_Line]:
-    return [_Line(str(row.total_bits), f"{row.module}.{row.name}", _because(row), _place(row.where)) for row in group]
+    """List the registers of a reason with the most bits; JSON lists them all."""
+    shown, rest = group[:_SHOWN], group[_SHOWN:]
+    lines = [_Line(str(row.total_bits), row.name, _because(row), _place(row.where)) for row in shown]
+    if rest:
+        bits = sum(row.total_bits for row in rest)
+        lines.append(_Line(str(bits), f"and {_count(len(rest), 'register')} more", f"{group[0].reason}: see --format json", ""))
+    return lines
 
 
 def _because(row: BankRow) -> str:
