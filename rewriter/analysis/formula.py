@@ -1,10 +1,13 @@
 """Boolean formulas over source conditions: building, simplifying, folding with constants."""
 
-from collections.abc import Iterator
+import re
+from collections.abc import Callable, Iterator
 
 from rewriter.model.expr import Expr
 from rewriter.model.plan import Liveness
 from rewriter.model.wake import Always, And, Atom, Formula, Never, Not, Or
+
+_NAME = re.compile(r"\w+(\[\w+\])*")
 
 ALWAYS = Always()
 NEVER = Never()
@@ -117,30 +120,28 @@ def key(formula: Formula) -> str:
             return "0"
 
 
-def text(formula: Formula) -> str:
-    """Format a formula for one line of a report."""
+def text(formula: Formula, spell: Callable[[Expr], str]) -> str:
+    """Format a formula for one line of a report; `spell` gives the text of a condition."""
     match formula:
         case Atom(expr):
-            return expr.key
-        case Not(Atom(expr)):
-            return f"!{expr.key}" if expr.key.replace("_", "").replace(".", "").isalnum() else f"!({expr.key})"
+            return spell(expr)
         case Not(operand):
-            return f"!({text(operand)})"
+            inner = text(operand, spell)
+            return f"!{inner}" if _NAME.fullmatch(inner) else f"!({inner})"
         case And(operands):
-            return " && ".join(f"({text(o)})" if _loose(o, Or) else text(o) for o in operands)
+            return " && ".join(_grouped(o, Or, text(o, spell)) for o in operands)
         case Or(operands):
-            return " || ".join(f"({text(o)})" if _loose(o, And) else text(o) for o in operands)
+            return " || ".join(_grouped(o, And, text(o, spell)) for o in operands)
         case Always():
             return "always"
         case Never():
             return "never"
 
 
-def _loose(operand: Formula, kind: type[And] | type[Or]) -> bool:
-    """Say whether an operand needs parentheses for the eye."""
-    if isinstance(operand, kind):
-        return True
-    return isinstance(operand, Atom) and ("||" in operand.expr.key or "?" in operand.expr.key)
+def _grouped(operand: Formula, kind: type[And] | type[Or], text: str) -> str:
+    """Put an operand of the other connective in parentheses."""
+    loose = isinstance(operand, Atom) and any(mark in text for mark in ("&&", "||", "?"))
+    return f"({text})" if isinstance(operand, kind) or loose else text
 
 
 def _flatten(kind: type[And] | type[Or], operands: tuple[Formula, ...]) -> list[Formula]:

@@ -1,5 +1,6 @@
 """When a register may change: the wake condition of a group of assignments, read off the branches."""
 
+import re
 from collections.abc import Iterable
 from dataclasses import dataclass
 
@@ -11,8 +12,11 @@ from rewriter.analysis.temporaries import Temporaries, loop_names
 from rewriter.model.design import ClockedBlock
 from rewriter.model.expr import Conditional, Expr, Operation, Reference, Select
 from rewriter.model.plan import Liveness
+from rewriter.model.source import SourceText
 from rewriter.model.statement import Assign, Block, Case, If, Loop, Statement, Target
 from rewriter.model.wake import Atom, Formula, Leaf, Skeleton, WakeCondition
+
+_COMMENT = re.compile(r"//[^\n]*|/\*.*?\*/", re.DOTALL)
 
 # A reviewer reads this much at a glance; longer conditions become a copy of the branches.
 _MOST_ATOMS = 8
@@ -38,23 +42,24 @@ class Wake:
     temporaries: frozenset[str]
 
 
-def wake_of(block: ClockedBlock, group: Group, temporaries: Temporaries) -> Wake:
+def wake_of(block: ClockedBlock, group: Group, temporaries: Temporaries, source: SourceText) -> Wake:
     """Derive the wake condition of a group from the synchronous part of its block.
 
     Raises:
         CannotCopyError: when the condition cannot be written beside the block.
     """
-    reader = _Reader(block, group, temporaries)
+    reader = _Reader(block, group, temporaries, source)
     return Wake(reader.condition(), reader.liveness_of_block(), reader.needed())
 
 
 class _Reader:
     """Read one group's assignments in one block."""
 
-    def __init__(self, block: ClockedBlock, group: Group, temporaries: Temporaries) -> None:
+    def __init__(self, block: ClockedBlock, group: Group, temporaries: Temporaries, source: SourceText) -> None:
         self.block = block
         self.group = group
         self.temporaries = temporaries
+        self.source = source
         self.loops = loop_names(block.body)
         self.gate = block.clock.condition if block.clock else None  # `iff`
 
@@ -148,7 +153,11 @@ class _Reader:
         key = f.key(form)
         for prefix in _scopes(self.block.scope):
             key = key.replace(prefix, plain_scope(prefix))
-        return WakeCondition(form, key, reads, f.text(form))
+        return WakeCondition(form, key, reads, f.text(form, self.spell))
+
+    def spell(self, expr: Expr) -> str:
+        """Give the source text of a condition, on one line."""
+        return " ".join(_COMMENT.sub(" ", self.source.slice(expr.span).decode("latin-1")).split())
 
     # skeletons
 

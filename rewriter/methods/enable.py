@@ -14,6 +14,7 @@ from rewriter.analysis.wake import Wake, wake_of
 from rewriter.model.design import ClockedBlock, Design, Module
 from rewriter.model.plan import Anchor, BlockId, Liveness, Occurrence, Outcome, Part, Proposal, Refusal, RegisterId
 from rewriter.model.reasons import PAGES, Reason, Verdict
+from rewriter.model.source import SourceText
 from rewriter.model.statement import Assign, Opaque
 
 
@@ -57,12 +58,15 @@ class _Finder:
     def outcomes(self) -> Iterator[Outcome]:
         """Yield an outcome per register, and an anchor when a part of the block must stay."""
         block_reason = traps.of_block(self.context)
-        source = self.context.design.source.by_path[self.block.span.file]
-        for group in groups(self.block, self.context.module, source):
+        for group in groups(self.block, self.context.module, self.source):
             yield self.judge(group, block_reason)
         yield from self.blocking_registers()
         if self.anchored():
             yield Anchor(self.block_id)
+
+    @property
+    def source(self) -> SourceText:
+        return self.context.design.source.by_path[self.block.span.file]
 
     @property
     def block_id(self) -> BlockId:
@@ -83,7 +87,7 @@ class _Finder:
         if reason is not None:
             return self.refuse(group, reason, holds=self.holds(group))
         try:
-            wake = wake_of(self.block, group, self.temporaries)
+            wake = wake_of(self.block, group, self.temporaries, self.source)
         except CannotCopyError as error:
             span = error.expr.span if error.expr else self.block.span
             detail = error.expr.key[:80] if error.expr else ""
@@ -111,7 +115,7 @@ class _Finder:
     def holds(self, group: Group) -> bool:
         """Say whether a refused register was seen to hold."""
         try:
-            return wake_of(self.block, group, self.temporaries).liveness is Liveness.SOMETIMES
+            return wake_of(self.block, group, self.temporaries, self.source).liveness is Liveness.SOMETIMES
         except CannotCopyError:
             return True
 
