@@ -1,5 +1,7 @@
 """What may stand as text beside the block it was written in."""
 
+from collections.abc import Iterator
+
 from rewriter.model.expr import Call, Constant, Expr, Opaque, Operation, Reference
 
 # Functions of IEEE 1800 clause 20 that depend on nothing but their arguments.
@@ -46,10 +48,18 @@ def check_condition(expr: Expr, *, wildcards: bool = False) -> None:
     """
     if not expr.copyable or (expr.width == 0 and not wildcards):
         raise CannotCopyError("not-copyable", expr)
+    patterns = {constant.span for node in expr.walk() for constant in _patterns(node)}
     for node in expr.walk():
-        word = _obstacle(node, wildcards=wildcards)
+        word = _obstacle(node, wildcards=wildcards or node.span in patterns)
         if word:
             raise CannotCopyError(word, expr)
+
+
+def _patterns(node: Expr) -> Iterator[Expr]:
+    """Yield the constants in which x and z are wildcards (IEEE 1800-2017, 11.4.6 and 11.4.13)."""
+    if isinstance(node, Operation) and node.operator in ("inside", "==?", "!=?"):
+        for operand in node.operands[1:]:
+            yield from (inner for inner in operand.walk() if isinstance(inner, Constant))
 
 
 def _obstacle(node: Expr, *, wildcards: bool) -> str:

@@ -1,6 +1,5 @@
 """Registers of a clocked block: the bits that are always written together."""
 
-import re
 from collections.abc import Iterable, Iterator
 from dataclasses import dataclass
 from functools import cached_property
@@ -12,8 +11,6 @@ from rewriter.model.design import ClockedBlock, Module
 from rewriter.model.plan import Part
 from rewriter.model.source import SourceText, Span
 from rewriter.model.statement import Assign, Index, Opaque, Target
-
-_NAME = re.compile(r"\s*(\\\S+\s|[\w$]+)")
 
 
 @dataclass(frozen=True)
@@ -142,13 +139,17 @@ def _parts(block: ClockedBlock, name: str, written: list[Target], source: Source
     """Name what is written of a variable as the source spells it, so that all copies of the block agree."""
     path = source_form(name, block.scope)
     targets = [t for t in written if t.variable == name]
-    selects = [_select(source.slice(t.span).decode("latin-1")) for t in targets]
+    selects = [_select(t, source) for t in targets]
     if not targets or "" in selects or any(t.index is not Index.CONSTANT for t in targets):
         yield Part(path)
     else:
         yield from (Part(path, select) for select in dict.fromkeys(selects))
 
 
-def _select(text: str) -> str:
-    """Give what follows the name in the text of a target, without spacing."""
-    return "".join(_NAME.sub("", text, count=1).split())
+def _select(target: Target, source: SourceText) -> str:
+    """Give what follows the variable in the text of a target, without spacing; empty for the whole, or out of a macro."""
+    text = "".join(source.slice(target.span).decode("latin-1").split())
+    path = "".join(target.variable.split())
+    while not text.startswith(path) and "." in path:
+        path = path.split(".", 1)[1]  # a name is written as seen from its scope
+    return text.removeprefix(path) if text.startswith(path) else ""

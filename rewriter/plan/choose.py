@@ -154,7 +154,7 @@ def _cell(wake: WakeCondition, proposals: list[Proposal]) -> Cell:
     blocks = tuple(dict.fromkeys(p.register.block for p in proposals))
     start = Span(block.span.file, block.span.start, block.span.start)
     return Cell(
-        id=f"{block.definition}:{first.scope}{name}@{start.start}",
+        id=f"{block.definition}:{first.scope}{name}{first.register.parts[0].select}@{start.start}",
         name=name,
         definition=block.definition,
         scope=first.scope,
