@@ -106,9 +106,11 @@ def lower_block(block: ProceduralBlockSymbol, expressions: Expressions, locator:
 
 def _event(event: SignalEventControl, expressions: Expressions, statements: Statements) -> Event:
     edge = Edge.FALLING if event.edge is EdgeKind.NegEdge else Edge.RISING
-    statements.whole(event.expr.sourceRange)
+    signal = expressions.lower(event.expr)
+    if not signal.copyable:  # a macro that stands for the whole signal can be replaced
+        statements.whole(event.expr.sourceRange)
     condition = expressions.lower(event.iffCondition) if event.iffCondition is not None else None
-    return Event(edge, expressions.lower(event.expr), condition)
+    return Event(edge, signal, condition)
 
 
 def _is_unbraced(syntax: SyntaxNode) -> bool:

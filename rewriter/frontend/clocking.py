@@ -4,14 +4,18 @@ from collections.abc import Iterable, Iterator
 
 from pyslang.analysis import AnalysisManager
 from pyslang.ast import (
+    ArgumentDirection,
     AssignmentExpression,
     ContinuousAssignSymbol,
     ConversionExpression,
+    ElementSelectExpression,
     Expression,
     ExpressionKind,
+    MemberAccessExpression,
     NamedValueExpression,
     PortSymbol,
     ProceduralBlockSymbol,
+    RangeSelectExpression,
     Symbol,
     SymbolKind,
     ValueExpressionBase,
@@ -23,6 +27,7 @@ from rewriter.frontend.bodies import Body
 from rewriter.frontend.elaboration import body_of
 from rewriter.frontend.expressions import names_in
 from rewriter.frontend.places import Locator
+from rewriter.frontend.targets import parts_of
 from rewriter.model.source import Span
 
 
@@ -121,17 +126,30 @@ def _data_reads(body: Body, clocks: dict[Symbol, Symbol], aliases: dict[Symbol, 
         skipped.update(_key(signal) for signal in event_signals(block))
         return VisitAction.Advance
 
+    def write(assignment: AssignmentExpression) -> None:
+        skipped.update(_key(_root(part)) for part in parts_of(assignment.left))
+
     skipped: set[tuple[int, int]] = set()
     body.symbol.visit(lookup_table={
         ExpressionKind.NamedValue: read, SymbolKind.ContinuousAssign: assign, SymbolKind.ProceduralBlock: edges,
-        SymbolKind.Instance: _skip,
+        ExpressionKind.Assignment: write, SymbolKind.Instance: _skip,
     })
     yield from (hit for hit in hits if _key(hit) not in skipped)
     for _, child in body.children:
         for connection in child.portConnections:
             expression = connection.expression
+            port = connection.port
+            if isinstance(port, PortSymbol) and port.direction is ArgumentDirection.Out:
+                continue
             if expression is not None and not isinstance(_plain(expression), NamedValueExpression):
                 yield from (name for name in names_in(expression) if name.symbol in clocks)
+
+
+def _root(expression: Expression) -> Expression:
+    """Give the name that a select chain starts from."""
+    while isinstance(expression, (ElementSelectExpression, RangeSelectExpression, MemberAccessExpression)):
+        expression = expression.value
+    return expression
 
 
 def _skip(_: object) -> VisitAction:

@@ -103,13 +103,15 @@ class Elaboration:
 
     def _stop_at_errors(self, diagnostics: pyslang.Diagnostics) -> None:
         engine = self.parsed.driver.diagEngine
+        printed = pyslang.TextDiagnosticClient()  # the driver's own prints when the driver dies
+        engine.clearClients()
+        engine.addClient(printed)
         engine.setIgnoreAllWarnings(True)
-        engine.setIgnoreAllNotes(False)
         engine.setSeverity(pyslang.Diags.UnknownModule, pyslang.DiagnosticSeverity.Ignored)
         engine.clearCounts()
         engine.issue(diagnostics)
         if engine.numErrors:
-            raise CompileError(self.parsed.driver.textDiagClient.getString())
+            raise CompileError(printed.getString())
 
     def _check_tops(self) -> None:
         names = [definition.name for definition in self.compilation.getDefinitions()]

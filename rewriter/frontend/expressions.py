@@ -122,7 +122,7 @@ class Expressions:
         symbol = expression.symbol
         span, copyable = self._locator.placed(expression.sourceRange)
         fixed = is_parameter(symbol)
-        outside = self.names.is_outside(symbol) and not fixed
+        outside = not fixed and (self.names.is_outside(symbol) or isinstance(expression, HierarchicalValueExpression))
         kind = expression.type
         path = self.names.path(symbol)
         return Reference(

@@ -5,7 +5,6 @@ from pyslang.ast import (
     GenvarSymbol,
     InstanceBodySymbol,
     ParameterSymbol,
-    StatementBlockSymbol,
     Symbol,
 )
 
@@ -13,13 +12,13 @@ from pyslang.ast import (
 class Names:
     """Give the path of each symbol as one module body sees it.
 
-    Variables of unnamed blocks would collide (`for (int i …)` twice), so they carry the offset of
-    their declaration: `i@120`.
+    Variables declared inside procedural blocks could collide (`for (int i …)` twice), so their path
+    carries the offset of the declaration: `blk.@120.i`.
     """
 
     def __init__(self, body: InstanceBodySymbol) -> None:
-        self._prefix = f"{body.hierarchicalPath}."
         self._body = body
+        self._prefix = f"{body.hierarchicalPath}."
         self._paths: dict[Symbol, tuple[str, bool]] = {}
         self._symbols: dict[str, Symbol] = {}
 
@@ -55,18 +54,19 @@ class Names:
 
     def _make(self, symbol: Symbol) -> tuple[str, bool]:
         path = symbol.hierarchicalPath
-        inside = path.startswith(self._prefix)
-        if inside:
+        owner = symbol.parentScope.containingInstance  # none for what packages hold
+        inside = owner is not None and owner == self._body
+        if path.startswith(self._prefix):
             path = path[len(self._prefix) :]
-        scope = symbol.parentScope
-        if isinstance(scope, StatementBlockSymbol) and not scope.name:
-            path = f"{path}@{symbol.location.offset}"
+        if is_local(symbol):
+            scope, dot, name = path.rpartition(".")
+            path = f"{scope}{dot}@{symbol.location.offset}.{name}"
         return path, not inside
 
 
 def is_local(symbol: Symbol) -> bool:
-    """Say whether a symbol is declared inside a procedural block."""
-    return isinstance(symbol.parentScope, StatementBlockSymbol)
+    """Say whether a symbol is declared inside a procedural block (or a subroutine)."""
+    return symbol.parentScope.isProceduralContext
 
 
 def is_parameter(symbol: Symbol) -> bool:

@@ -11,7 +11,6 @@ from pyslang.ast import (
     RangeSelectExpression,
     SimpleAssignmentPatternExpression,
     StreamingConcatenationExpression,
-    Symbol,
 )
 
 from rewriter.frontend.bits import extent
@@ -33,7 +32,7 @@ def targets_of(expression: Expression, expressions: Expressions, locator: Locato
         loop_variables: paths of the variables of enclosing loops.
     """
     found: list[Target] = []
-    for part in _parts(expression):
+    for part in parts_of(expression):
         target = _target(part, expressions, locator, loop_variables)
         if target is None:
             return None
@@ -41,18 +40,19 @@ def targets_of(expression: Expression, expressions: Expressions, locator: Locato
     return tuple(found)
 
 
-def _parts(expression: Expression) -> Iterator[Expression]:
+def parts_of(expression: Expression) -> Iterator[Expression]:
+    """Give the names and selects that a left-hand side writes, concatenations taken apart."""
     if isinstance(expression, ConversionExpression) and expression.isImplicit:
-        yield from _parts(expression.operand)
+        yield from parts_of(expression.operand)
     elif isinstance(expression, ConcatenationExpression):
         for part in expression.operands:
-            yield from _parts(part)
+            yield from parts_of(part)
     elif isinstance(expression, SimpleAssignmentPatternExpression):
         for part in expression.elements:
-            yield from _parts(part)
+            yield from parts_of(part)
     elif isinstance(expression, StreamingConcatenationExpression):
         for stream in expression.streams:
-            yield from _parts(stream.operand)
+            yield from parts_of(stream.operand)
     else:
         yield expression
 
@@ -93,7 +93,3 @@ def _index(indices: tuple[Expr, ...], loop_variables: frozenset[str]) -> Index:
         kind = Index.LOOP
     return kind
 
-
-def symbol_of(expression: Expression) -> Symbol | None:
-    """Give the variable that a plain name or select chain belongs to."""
-    return expression.getSymbolReference(allowPacked=True)
