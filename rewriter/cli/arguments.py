@@ -3,6 +3,7 @@
 import difflib
 from collections.abc import Sequence
 from dataclasses import dataclass
+from itertools import pairwise
 from pathlib import Path
 
 import click
@@ -64,13 +65,14 @@ def guess(rtl: Sequence[str], options: Sequence[click.Parameter], message: str) 
     Args:
         rtl: the RTL arguments.
         options: the command's own options.
-        message: slang's complaint.
+        message: the complaint; it names the word, or what followed it and was taken for a file.
     """
     names = [name for option in options for name in (*option.opts, *option.secondary_opts)]
-    for argument in rtl:
+    for argument, follower in pairwise((*rtl, "")):
         word = argument.partition("=")[0]
-        if word.startswith("--") and word in message and (near := difflib.get_close_matches(word, names, 1)):
-            return f"did you mean `{near[0]}`?"
+        blamed = word in message or (follower and follower in message)
+        if word.startswith("--") and blamed and (near := difflib.get_close_matches(word, names, 1, 0.75)):
+            return f"`{word}` is no option of slang; did you mean `{near[0]}`?"
     return ""
 
 
@@ -80,11 +82,15 @@ class RtlCommand(click.Command):
     def parse_args(self, ctx: click.Context, args: list[str]) -> list[str]:
         """Keep the RTL arguments aside, and let the settings stand in for options that are not given."""
         options = [parameter for parameter in self.get_params(ctx) if isinstance(parameter, click.Option)]
-        parted = split(args, options)
-        ctx.meta[_META] = parted.rtl
-        if "--help" not in parted.own:
-            ctx.default_map = settings.load(_settings_file(parted.own))
-        return super().parse_args(ctx, list(parted.own))
+        try:
+            parted = split(args, options)
+            ctx.meta[_META] = parted.rtl
+            if "--help" not in parted.own:
+                ctx.default_map = settings.load(_settings_file(parted.own))
+            return super().parse_args(ctx, list(parted.own))
+        except click.UsageError as error:
+            error.ctx = error.ctx or ctx  # so that the message can name the command
+            raise
 
     def invoke(self, ctx: click.Context) -> object:
         """Run the command; a word that slang did not know may have meant an option of ours."""

@@ -12,16 +12,23 @@ from rewriter.model.design import Warning as Note
 from rewriter.model.errors import StillclockError
 
 
+class ReaderGoneError(Exception):
+    """Report that nobody reads the results any more (`… | head`). A broken pipe itself, click would take for a failure."""
+
+
 def result(text: str) -> None:
     """Print a result."""
-    sys.stdout.write(text if text.endswith("\n") or not text else f"{text}\n")
+    result_bytes((text if text.endswith("\n") or not text else f"{text}\n").encode("utf-8", "backslashreplace"))
 
 
 def result_bytes(data: bytes) -> None:
     """Print a result whose bytes matter (a diff of files in any encoding)."""
-    sys.stdout.flush()
-    sys.stdout.buffer.write(data)
-    sys.stdout.buffer.flush()
+    try:
+        sys.stdout.flush()
+        sys.stdout.buffer.write(data)
+        sys.stdout.buffer.flush()
+    except BrokenPipeError:
+        raise ReaderGoneError from None
 
 
 def message(text: str) -> None:

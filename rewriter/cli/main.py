@@ -90,8 +90,8 @@ def _tell(failure: BaseException) -> int:
             console.message(f"error: {failure.format_message()}")
             if isinstance(failure, click.UsageError) and failure.ctx is not None:
                 console.message(f"help: `{failure.ctx.command_path} --help` lists the options")
-        case BrokenPipeError():
-            # The reader has seen enough. Python would complain once more when it flushes stdout at exit.
+        case console.ReaderGoneError():
+            # Python would complain once more when it flushes stdout at exit.
             os.dup2(os.open(os.devnull, os.O_WRONLY), sys.stdout.fileno())
             status = 128 + signal.SIGPIPE
         case KeyboardInterrupt() | click.Abort() | InterruptedBySignalError():

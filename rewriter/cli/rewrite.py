@@ -15,7 +15,7 @@ from rewriter.model.run import Run
 from rewriter.report import document, text
 from rewriter.report.diff import unified
 from rewriter.report.folder import guard
-from rewriter.report.output import write_folder, write_in_place
+from rewriter.report.output import guard_cell_file, write_folder, write_in_place
 
 _OPEN = {"undecided", "not-checked"}
 
@@ -61,6 +61,8 @@ class Sink:
             raise click.UsageError("--cell-file goes with --in-place; --out writes the cell to DIR/cell")
         if self.out is not None:
             guard(self.out)
+        if self.cell_file is not None:
+            guard_cell_file(self.cell_file)
 
 
 @click.command("rewrite", cls=RtlCommand, short_help="Gate the banks, prove them, write the RTL.")
@@ -104,9 +106,10 @@ def _deliver(run: Run, sink: Sink, form: str) -> None:
         write_folder(run, done, sink.out, flow.verify_folder)
         console.message(f"written: {sink.out}; compile {sink.out}/rtl.f in place of the sources")
     elif sink.cell_file is not None and done.files:
-        write_in_place(done, sink.cell_file)
-        console.message("add this line to the file list:")
-        console.result(str(sink.cell_file))
+        write_in_place(done, run.design.source, sink.cell_file)
+        if done.cell_files and str(sink.cell_file.resolve()) not in run.design.source.by_path:
+            console.message("add this line to the file list:")
+            console.result(str(sink.cell_file))
     shows = sink.diff or not (sink.writes or sink.check)
     if form == "json":
         body = document.report(run, done) | ({"diff": _diff(run).decode("utf-8", "replace")} if shows else {})

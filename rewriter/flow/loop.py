@@ -11,6 +11,7 @@ from rewriter.flow.checks import check, judge, rewritten_source
 from rewriter.flow.evidence import pair, rejected, rejection_warnings, waived
 from rewriter.flow.job import Job, Progress, StopWatch
 from rewriter.methods import METHODS
+from rewriter.model.cells import FILES
 from rewriter.model.design import Design, Edge
 from rewriter.model.errors import UserError
 from rewriter.model.evidence import ProofJob
@@ -44,14 +45,14 @@ def rewrite(job: Job, progress: Progress) -> Run:
     """
     watch = StopWatch(progress)
     design, settled = _find(job, watch)
-    wishes = EditOptions(job.test_port, job.test_pins, render_cells(job.cell_map, _timescale(design)))
+    wishes = EditOptions(job.test_port, job.test_pins, _cells(job, design))
     excluded = switched_off(job.off, settled)
     settled = _without(settled, excluded)
     warnings = list(design.warnings)
     while True:
         plan = _choose(settled, job, excluded)
         with watch.stage("edit", "editing"):
-            done = edit(design, plan, wishes)
+            done = _with_used_cells(edit(design, plan, wishes), plan)
         if _grow(excluded, done.excluded):
             continue
         run = _proved(Run(design, settled, plan, done, excluded=dict(excluded)), done, job, watch)
@@ -82,6 +83,19 @@ def _settle(design: Design) -> Settled:
 
 def _choose(settled: Settled, job: Job, excluded: Mapping[RegisterId, Reason]) -> Plan:
     return choose(settled, Policy(job.min_bits, has_falling_cell=job.cell_map.supports(Edge.FALLING)), excluded)
+
+
+def _cells(job: Job, design: Design) -> dict[str, str]:
+    """Give the wrapper files, without those whose module the design holds from an earlier rewrite."""
+    files = render_cells(job.cell_map, _timescale(design))
+    return {name: text for name, text in files.items() if name.removesuffix(".v") not in design.definitions}
+
+
+def _with_used_cells(done: Rewrite, plan: Plan) -> Rewrite:
+    """Drop wrapper files that nothing instantiates: they would look like further tops."""
+    placed = {cell.cell for cell in done.cells}
+    used = {FILES[cell.edge] for cell in plan.cells if cell.id in placed}
+    return replace(done, cell_files={name: text for name, text in done.cell_files.items() if name in used})
 
 
 def _timescale(design: Design) -> str | None:

@@ -1,13 +1,16 @@
 """Put a rewrite on disk: as a folder of its own, or over the sources."""
 
 import json
+import re
 from collections.abc import Callable, Mapping
 from pathlib import Path
 from typing import Any
 
+from rewriter.model.cells import WRAPPERS
 from rewriter.model.errors import UserError
 from rewriter.model.rewrite import Rewrite
 from rewriter.model.run import Run
+from rewriter.model.source import RtlSource
 from rewriter.report import document, filelist, folder
 from rewriter.report.diff import unified
 from rewriter.report.inplace import replace_files
@@ -58,17 +61,41 @@ def folder_files(run: Run, done: Rewrite, moves: Moves) -> dict[str, bytes]:
     }
 
 
-def write_in_place(done: Rewrite, cell_file: Path) -> None:
+def guard_cell_file(cell_file: Path) -> None:
+    """Check, before the long work, that a cell file may be written.
+
+    Raises:
+        UserError: it is something else's file, or has no folder.
+    """
+    if not cell_file.parent.is_dir():
+        raise UserError(f"{cell_file}: its folder does not exist", help="name a file in a folder that exists")
+    if cell_file.exists() and not _is_cell_file(cell_file):
+        raise UserError(
+            f"{cell_file}: exists, and is no cell file of stillclock", help="name a new file, or an earlier --cell-file"
+        )
+
+
+def _is_cell_file(path: Path) -> bool:
+    """Say whether every module of a file is a wrapper of ours."""
+    modules = re.findall(rb"^\s*module\s+(\w+)", path.read_bytes(), re.MULTILINE) if path.is_file() else []
+    return bool(modules) and all(name.decode() in WRAPPERS.values() for name in modules)
+
+
+def write_in_place(done: Rewrite, source: RtlSource, cell_file: Path) -> None:
     """Edit the sources, and write the cells into one file; all or nothing.
 
     Raises:
         UserError: a source is not what was read, or something cannot be written.
     """
+    guard_cell_file(cell_file)
     for change in done.files:
         if Path(change.path).read_bytes() != change.old:
             raise UserError(f"{change.path}: changed while stillclock was at work", help="run the command again")
-    cells = "\n".join(done.cell_files.values()).encode()
-    replace_files({**{Path(change.path): change.new for change in done.files}, cell_file: cells})
+    # A cell file that is a source holds the cells of an earlier rewrite; only new ones come here.
+    former = source.by_path.get(str(cell_file.resolve()))
+    cells = [*([former.data] if former else []), *(text.encode() for text in done.cell_files.values())]
+    new = {cell_file: b"\n".join(cells)} if done.cell_files else {}
+    replace_files({**{Path(change.path): change.new for change in done.files}, **new})
 
 
 def read_report(place: Path) -> Mapping[str, Any]:

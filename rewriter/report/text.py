@@ -92,7 +92,9 @@ def _reason_lines(group: Sequence[BankRow]) -> list[_Line]:
     lines = [_Line(str(row.total_bits), row.name, _because(row), _place(row.where)) for row in shown]
     if rest:
         bits = sum(row.total_bits for row in rest)
-        lines.append(_Line(str(bits), f"and {_count(len(rest), 'register')} more", f"{group[0].reason}: see --format json", ""))
+        lines.append(
+            _Line(str(bits), f"and {_count(len(rest), 'register')} more", f"{group[0].reason}: see --format json", "")
+        )
     return lines
 
 
@@ -118,7 +120,8 @@ def _layout(lines: Sequence[_Line]) -> list[str]:
     count = max(len(line.count) for line in lines)
     name = min(max(len(line.name) for line in lines), _NAMES)
     place = min(max(len(line.place) for line in lines), _PLACES)
-    text = WIDTH - (2 + count) - (2 + name) - 2 - (2 + place)
+    room = WIDTH - (2 + count) - (2 + name) - 2 - (2 + place)
+    text = min(max(len(line.text) for line in lines), room)
     return [
         f"  {line.count:>{count}}  {_cut(line.name, name):<{name}}  {_cut(line.text, text):<{text}}"
         f"  {_cut_front(line.place, place)}".rstrip()

@@ -53,8 +53,13 @@ def test_a_value_that_is_an_option_is_a_missing_value() -> None:
 
 def test_a_near_miss_is_named() -> None:
     rtl = ["a.sv", "--cheek"]
-    assert guess(rtl, OPTIONS, "unknown command line argument '--cheek'") == "did you mean `--check`?"
+    assert (
+        guess(rtl, OPTIONS, "unknown command line argument '--cheek'")
+        == "`--cheek` is no option of slang; did you mean `--check`?"
+    )
+    assert guess(["--uot", "dir"], OPTIONS, "no such file: dir").endswith("did you mean `--out`?")
     assert guess(rtl, OPTIONS, "cannot read a.sv") == ""
+    assert guess(["--std", "latest"], OPTIONS, "invalid value 'latest' for --std") == ""
     assert guess(["--zzz"], OPTIONS, "unknown command line argument '--zzz'") == ""
 
 

@@ -53,7 +53,7 @@ def test_the_output_folder(shell: Shell, tmp_path: Path) -> None:
     assert (ended.status, ended.out) == (0, "")
     found = tree(tmp_path / "out")
     assert set(found) == {
-        "rtl/two.sv", "cell/stillclock_icg.v", "cell/stillclock_icg_n.v", "rtl.f", "original.f", "report.json", "changes.diff",
+        "rtl/two.sv", "cell/stillclock_icg.v", "rtl.f", "original.f", "report.json", "changes.diff",
     }  # fmt: skip
     assert b"/rtl/two.sv\n" in found["original.f"]
     assert b"\nrtl/two.sv\ncell/stillclock_icg.v\n" in found["rtl.f"]
@@ -116,6 +116,20 @@ def test_in_place(shell: Shell, tmp_path: Path) -> None:
     again = shell("rewrite", "rtl/two.sv", "rtl/cell.v", "--in-place", "--cell-file", "rtl/cell.v")
     assert (again.status, again.out) == (0, "")
     assert shell("rewrite", "rtl/two.sv", "rtl/cell.v", "--check").status == 0
+
+
+def test_in_place_again_with_cells_of_the_other_edge(shell: Shell, tmp_path: Path) -> None:
+    falling = HOLD.replace("hold", "two").replace("posedge", "negedge")
+    write(tmp_path, {"fall.sv": falling.replace("module two", "module fall")})
+    shell("rewrite", "rtl/two.sv", "--in-place", "--cell-file", "cell.v")
+    first = (tmp_path / "cell.v").read_text()
+    ended = shell(
+        "rewrite", "fall.sv", "cell.v", "--top", "fall", "--in-place", "--cell-file", "cell.v", "--allow-unproved"
+    )
+    assert (ended.status, ended.out) == (0, ""), "the line is in the list already"
+    assert (tmp_path / "cell.v").read_text().startswith(first)
+    assert "module stillclock_icg_n " in (tmp_path / "cell.v").read_text()
+    assert shell("rewrite", "rtl/two.sv", "fall.sv", "cell.v", "--top", "fall", "--top", "two", "--check").status == 0
 
 
 def test_json_goes_to_stdout(shell: Shell) -> None:
