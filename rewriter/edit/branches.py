@@ -37,7 +37,7 @@ class Printer:
     complete: bool
     step: str
 
-    def lines(self, statement: Statement) -> list[str]:
+    def lines(self, statement: Statement) -> list[str]:  # noqa: PLR0911 (one return per kind)
         """Give the lines of a statement, starting at the left margin."""
         match statement:
             case Block():
@@ -125,14 +125,14 @@ def idle(item: CaseItem) -> str:
     return "idle" if isinstance(item.body, Empty) and not item.is_default else ""
 
 
-def runs(items: tuple[CaseItem, ...], alike: Callable[[CaseItem], str] = idle) -> Iterator[tuple[CaseItem, ...]]:
+def runs(items: tuple[CaseItem, ...], alike: Callable[[CaseItem], str] = idle) -> Iterator[list[CaseItem]]:
     """Group neighbouring items that do the same; two that wake keep their lines, as the original has them."""
     for word, group in groupby(items, alike):
-        run = tuple(group)
+        run = list(group)
         if word == "idle" or (word and len(run) >= _FEWEST):
             yield run
         else:
-            yield from ((item,) for item in run)
+            yield from ([item] for item in run)
 
 
 def merged_labels(labels: list[str], body: str, step: str) -> list[str]:

@@ -80,7 +80,7 @@ def _case_difference(page: Page, old: Case, new: Case, step: str) -> Iterator[Cu
             yield from _branch(page, first.head.end, first.body, run[0].body, step)
 
 
-def _merged(page: Page, run: tuple[CaseItem, ...], step: str) -> str:
+def _merged(page: Page, run: list[CaseItem], step: str) -> str:
     labels = [copied(page.text(item.head)).rstrip().removesuffix(":").rstrip() for item in run]
     labels = [label + " " if re.search(r"\\\S+\Z", label) else label for label in labels]
     indent = page.indent(run[0].span.start)

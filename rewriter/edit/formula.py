@@ -16,7 +16,7 @@ class FormulaWriter:
     def __init__(self, texts: dict[str, SourceText]) -> None:
         self._texts = texts
 
-    def write(self, formula: Formula) -> str:
+    def write(self, formula: Formula) -> str:  # noqa: PLR0911 (one return per kind)
         """Give a formula on one line.
 
         Raises:

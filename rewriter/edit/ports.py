@@ -1,8 +1,9 @@
 """Text edits that add one port to a definition and one connection to an instance."""
 
 import re
+from dataclasses import dataclass
 
-from rewriter.edit.text import CODEC, LEXEMES, Page
+from rewriter.edit.text import CODEC, COMMENT, LEXEMES, Page
 from rewriter.model.design import ConnectionStyle, Definition, InstanceSyntax, PortStyle
 from rewriter.model.rewrite import Edit
 from rewriter.model.source import Span
@@ -17,16 +18,30 @@ _PORT_LINE = re.compile(
 )
 
 
-def port_edits(page: Page, definition: Definition, name: str, *, first: bool) -> list[Edit]:
-    """Add an input to a definition: the last port, or the first when directives stand in the list.
+@dataclass(frozen=True)
+class NewPort:
+    """An input to be added.
+
+    Args:
+        name: its name.
+        first: it is the first of the list (directives stand in it), else the last.
+        others: how many ports there were.
+    """
+
+    name: str
+    first: bool
+    others: int
+
+
+def port_edits(page: Page, definition: Definition, port: NewPort) -> list[Edit]:
+    """Add an input to a definition.
 
     Args:
         page: file of the definition's header.
         definition: gets the port.
-        name: of the new input.
-        first: put it first.
+        port: the input.
     """
-    ports = definition.ports
+    ports, name, first = definition.ports, port.name, port.first
     match ports.style:
         case PortStyle.NONE:
             return [_insert(page, ports.span.start, f" (input wire {name})", PORT)]
@@ -73,14 +88,13 @@ def _aligned(page: Page, definition: Definition, name: str) -> str:
         if not before.strip(" \t()").startswith(("input", "output", "inout")) and page.opens_line(ports.first):
             indent = page.indent(ports.first)
         return f"{indent}input wire {name}" if indent or page.opens_line(ports.first) else f"    input wire {name}"
-    indent = found["indent"]
-    if "\t" in found["gap"] + found["space"]:
-        return f"{indent}input{found['gap']}wire{found['space'] or ' '}{name}"
-    head = indent + "input" + " " * max(1, len(found["direction"] + found["gap"]) - len("input"))
+    indent, gap, space = found["indent"], found["gap"], found["space"] or " "
+    if "\t" in gap + space:
+        return f"{indent}input{gap}wire{space}{name}"
+    head = indent + "input" + " " * max(1, len(found["direction"] + gap) - len("input"))
     if not found["type"]:
-        return f"{indent}input wire {name}"
-    column = found.start("name")
-    return f"{head}wire{' ' * max(1, column - len(head) - len('wire'))}{name}"
+        head = f"{indent}input "
+    return f"{head}wire{' ' * max(1, found.start('name') - len(head) - len('wire'))}{name}"
 
 
 def _last_name(page: Page, definition: Definition, name: str) -> Edit:
@@ -107,31 +121,24 @@ def _declaration(page: Page, definition: Definition, name: str) -> Edit:
     return _insert(page, page.line_end(end), f"{page.newline}{indent}{declared}", PORT)
 
 
-def connection_edits(
-    page: Page, instance: InstanceSyntax, port: str, value: str, *, ports: int, first: bool
-) -> list[Edit]:
+def connection_edits(page: Page, instance: InstanceSyntax, port: NewPort, value: str) -> list[Edit]:
     """Connect a new port of an instance.
 
     Args:
         page: file of the instance.
         instance: as it stands.
-        port: name of the new port.
+        port: the new port.
         value: what it is connected to.
-        ports: how many ports the definition had.
-        first: the new port is the first of the list.
     """
     match instance.style:
         case ConnectionStyle.ORDERED:
-            return [_ordered(page, instance, value, ports=ports, first=first)]
-        case ConnectionStyle.EMPTY if ports == 0 or first:
-            return [_insert(page, instance.parentheses.start + 1, f".{port}({value})", CONNECTION)]
+            return [_ordered(page, instance, port, value)]
         case ConnectionStyle.EMPTY:
-            return [_insert(page, instance.parentheses.start + 1, f".{port}({value})", CONNECTION)]
-        case ConnectionStyle.WILDCARD:
-            # `.*` finds a name of the same spelling by itself.
-            return [] if value == port else [_named(page, instance, port, value)]
-        case ConnectionStyle.NAMED:
-            return [_named(page, instance, port, value)]
+            return [_insert(page, instance.parentheses.start + 1, f".{port.name}({value})", CONNECTION)]
+        case ConnectionStyle.WILDCARD if value == port.name:
+            return []  # `.*` finds a name of the same spelling by itself
+        case ConnectionStyle.WILDCARD | ConnectionStyle.NAMED:
+            return [_named(page, instance, port.name, value)]
 
 
 def _named(page: Page, instance: InstanceSyntax, port: str, value: str) -> Edit:
@@ -148,16 +155,13 @@ def _named(page: Page, instance: InstanceSyntax, port: str, value: str) -> Edit:
     return _insert(page, instance.first, f"{aligned}{page.newline}{page.indent(instance.first)}", CONNECTION)
 
 
-def _ordered(page: Page, instance: InstanceSyntax, value: str, *, ports: int, first: bool) -> Edit:
-    if first:
-        return _insert(page, instance.parentheses.start + 1, f"{value}, ", CONNECTION)
-    inside = page.data[instance.parentheses.start + 1 : instance.parentheses.end - 1]
-    missing = ports - ordered_count(inside)
-    last = instance.last_end
-    closing = instance.parentheses.end - 1
-    bare = page.data[last:closing]
-    blank_last = "," in LEXEMES.sub("", bare)
-    return _insert(page, closing if blank_last else last, f"{', ' * missing}, {value}", CONNECTION)
+def _ordered(page: Page, instance: InstanceSyntax, port: NewPort, value: str) -> Edit:
+    start, end = instance.parentheses.start + 1, instance.parentheses.end - 1
+    if port.first:
+        return _insert(page, start, f"{value}, ", CONNECTION)
+    missing = port.others - ordered_count(page.data[start:end])
+    blank_last = "," in COMMENT.sub("", page.data[instance.last_end : end])
+    return _insert(page, end if blank_last else instance.last_end, f"{', ' * missing}, {value}", CONNECTION)
 
 
 def ordered_count(inside: str) -> int:

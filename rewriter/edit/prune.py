@@ -59,9 +59,7 @@ class Pruner:
         return replace(statement, then=then or Empty(statement.then.span), other=other)
 
     def _case(self, statement: Case) -> Case | None:
-        items = tuple(
-            replace(item, body=self.prune(item.body) or Empty(item.body.span)) for item in statement.items
-        )
+        items = tuple(replace(item, body=self.prune(item.body) or Empty(item.body.span)) for item in statement.items)
         if all(isinstance(item.body, Empty) for item in items):
             return None
         if statement.qualifier or self.is_full(statement):

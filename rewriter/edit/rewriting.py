@@ -9,7 +9,7 @@ from rewriter.edit.options import EditOptions
 from rewriter.edit.site import Site, without
 from rewriter.edit.text import CannotEditError
 from rewriter.edit.thread import Threads, thread
-from rewriter.model.design import Design, Warning
+from rewriter.model.design import Design, Warning  # noqa: A004 (the word users see)
 from rewriter.model.plan import BlockId, Plan, RegisterId
 from rewriter.model.reasons import Reason
 from rewriter.model.rewrite import Edit, FileChange, Rewrite
@@ -48,12 +48,12 @@ def edit(design: Design, plan: Plan, options: EditOptions) -> Rewrite:
             return _rewrite(design, attempt, options, excluded)
         for bank in plan.banks:
             if bank.block in attempt.failed:
-                excluded |= {register: attempt.failed[bank.block] for register in bank.registers}
+                excluded |= dict.fromkeys(bank.registers, attempt.failed[bank.block])
         plan = without(plan, frozenset(attempt.failed))
 
 
 def _attempt(design: Design, plan: Plan, options: EditOptions) -> _Attempt:
-    threads = thread(design, frozenset(cell.definition for cell in plan.cells), options)
+    threads = thread(design, (cell.definition for cell in plan.cells), options)
     failed: dict[BlockId, Reason] = {
         block.block: threads.blocked[block.block.definition]
         for block in plan.blocks
@@ -62,8 +62,8 @@ def _attempt(design: Design, plan: Plan, options: EditOptions) -> _Attempt:
     site = Site(design, plan, threads.expression)
     edits = list(threads.edits)
     for block in sorted(plan.blocks, key=lambda b: b.block.span):
-        if block.block in failed or failed:
-            continue
+        if failed:
+            break  # the rest of the plan is tried again without these
         try:
             edits += rewrite_block(site, block)
         except CannotEditError as error:
@@ -93,7 +93,8 @@ def _generated(design: Design, plan: Plan) -> list[Warning]:
     names = sorted({cell.definition for cell in plan.cells if design.definitions[cell.definition].generated})
     files = sorted({design.definitions[name].span.file for name in names})
     return [
-        Warning("this file says that it is generated; the rewrite is lost when it is made again", path) for path in files
+        Warning("this file says that it is generated; the rewrite is lost when it is made again", path)
+        for path in files
     ]
 
 

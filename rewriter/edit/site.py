@@ -1,6 +1,5 @@
 """What is known while the blocks of a plan are rewritten."""
 
-import re
 from collections.abc import Mapping
 from dataclasses import dataclass, field, replace
 
@@ -127,7 +126,9 @@ class Site:
         names = self.names_of(bank.block.definition)
         writer = SkeletonWriter(page, module, block, self.formulas, wake, wake.form, stem, names, step)
         lines = writer.lines(language)
-        return (lines, lines[0].partition(" = ")[2].rstrip(";"), False) if writer.is_formula else (lines, wake.text, True)
+        if writer.is_formula:
+            return lines, " ".join(line.strip() for line in lines).partition(" = ")[2].rstrip(";"), False
+        return lines, wake.text, True
 
     def _clock(self, cell: Cell, bank: Bank) -> str:
         if isinstance(cell.clock, CellRef):
@@ -174,12 +175,3 @@ def without(plan: Plan, blocks: frozenset[BlockId]) -> Plan:
         banks=banks,
         blocks=tuple(block for block in plan.blocks if block.block not in blocks),
     )
-
-
-def source_path(path: str, scope: str) -> str:
-    """Drop the generate indices of a path, as Part.variable does (only those of the block's own scopes)."""
-    if not scope or "[" not in path:
-        return path
-    ends = [i + 1 for i, character in enumerate(scope) if character == "."]
-    prefix = next((scope[:end] for end in reversed(ends) if path.startswith(scope[:end])), "")
-    return re.sub(r"\[[^\]]*\]", "", prefix) + path[len(prefix) :]

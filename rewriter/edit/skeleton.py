@@ -155,8 +155,10 @@ class SkeletonWriter:
             case If():
                 then = self._shortened(statement.then)
                 other = self._shortened(statement.other) if statement.other else None
-                return then if other and self._wakes(then) and self._wakes(other) else replace(
-                    statement, then=then, other=other
+                return (
+                    then
+                    if other and self._wakes(then) and self._wakes(other)
+                    else replace(statement, then=then, other=other)
                 )
             case Case():
                 items = tuple(replace(item, body=self._shortened(item.body)) for item in statement.items)
@@ -220,7 +222,7 @@ def local_declaration(variable: Variable | None, path: str) -> str:
         raise CannotEditError("not-copyable", f"the type of {name} is not known")
     kind = re.sub(r"\A(?:input|output|inout)\s+", "", copied(variable.declaration).strip())
     kind = re.sub(r"\A(?:var|wire)\b\s*", "", kind)
-    if not kind or kind.startswith("[") or kind.startswith(("signed", "unsigned")):
+    if not kind or kind.startswith(("[", "signed", "unsigned")):
         kind = f"reg {kind}".rstrip()
     return f"{kind} {name}{' ' if variable.unpacked else ''}{variable.unpacked};"
 

@@ -8,7 +8,6 @@ from functools import cached_property
 from rewriter.edit.cuts import Cut, applied, difference, gaps, has_directive, tidied, whole_line_comments
 from rewriter.edit.names import COPY_FORMS, Names
 from rewriter.edit.prune import Pruner, check_separate
-from rewriter.edit.site import source_path
 from rewriter.edit.skeleton import local_declaration
 from rewriter.edit.text import COMMENT, CannotEditError, Page, renamed
 from rewriter.model.design import ClockedBlock, Module
@@ -66,7 +65,8 @@ class Splitter:
         for start, end in self._gaps:
             lost = any(cut.start <= start and end <= cut.end for cut in cuts)
             if lost and "`" in self._uncommented(start, end):
-                raise CannotEditError("inactive-code", "text of a macro stands among what leaves the block", self._at(start))
+                detail = "text of a macro stands among what leaves the block"
+                raise CannotEditError("inactive-code", detail, self._at(start))
         return tuple(self._with_comments(cut) for cut in cuts)
 
     def _stays(self, statement: Statement) -> bool:
@@ -90,9 +90,9 @@ class Splitter:
             return cut
         start = cut.start
         for comment in reversed(self._comments):
-            line = self.page.line_start(comment.start)
-            if comment.end < start and not data[comment.end : start].strip() and data.count("\n", comment.end, start) == 1:
-                start = line
+            between = data[comment.end : start]
+            if comment.end < start and not between.strip() and between.count("\n") == 1:
+                start = self.page.line_start(comment.start)
         return Cut(start, cut.end)
 
     # what leaves
@@ -196,8 +196,9 @@ class Splitter:
                 yield Cut(body.span.start, body.span.start, opened + inner)
                 yield Cut(body.span.end, body.span.end, closing)
         for block in pruned.walk():
-            renamed = isinstance(block, Block) and block.label and not (declared and block.span == body.span)
-            if renamed and not keep_labels:
+            if not isinstance(block, Block) or not block.label or keep_labels:
+                continue
+            if not (declared and block.span == body.span):
                 label = f" : {names.reserve(f'{block.label}_{stem}', ('{}',))}" if block.declarations else ""
                 yield Cut(block.begin.start, block.begin.end, f"begin{label}")
                 yield Cut(block.end.start, block.end.end, "end")
@@ -225,7 +226,7 @@ class Splitter:
     # helpers
 
     def _writes(self, bank: Bank, statement: Assign) -> bool:
-        return not statement.blocking and any(statement.span in proposal.writes for proposal in bank.proposals)
+        return any(statement.span in proposal.writes for proposal in bank.proposals)
 
     def _is_full(self, case: Case) -> bool:
         """Say whether a tool may take the case to be complete, by attribute or by a comment on its first line."""

@@ -14,15 +14,18 @@ WIDTH = 100
 """Columns after which inserted text is broken."""
 
 DIRECTIVE = re.compile(
-    r"`(?:ifdef|ifndef|elsif|else|endif|define|undef|undefineall|include|line|timescale|default_nettype|pragma|resetall"
-    r"|celldefine|endcelldefine|begin_keywords|end_keywords|nounconnected_drive|unconnected_drive)\b"
+    r"`(?:ifdef|ifndef|elsif|else|endif|define|undef|undefineall|include|line|timescale|default_nettype|pragma"
+    r"|resetall|celldefine|endcelldefine|begin_keywords|end_keywords|nounconnected_drive|unconnected_drive)\b"
 )
 COMMENT = re.compile(r"//[^\n]*|/\*.*?\*/", re.DOTALL)
-LEXEMES = re.compile(r"(?P<comment>//[^\r\n]*|/\*.*?\*/)|(?P<string>\"(?:\\.|[^\"\\])*\")|(?P<escaped>\\[^\s]+)", re.DOTALL)
+LEXEMES = re.compile(
+    r"(?P<comment>//[^\r\n]*|/\*.*?\*/)|(?P<string>\"(?:\\.|[^\"\\])*\")|(?P<escaped>\\[^\s]+)", re.DOTALL
+)
 
 
 _WORDS = re.compile(
-    LEXEMES.pattern + r"|(?P<macro>`[\w$]+)|(?P<number>'[sS]?[bBoOdDhH]\s*[\w?]+)|(?P<member>(?:\.|::)\s*[A-Za-z_][\w$]*)"
+    LEXEMES.pattern
+    + r"|(?P<macro>`[\w$]+)|(?P<number>'[sS]?[bBoOdDhH]\s*[\w?]+)|(?P<member>(?:\.|::)\s*[A-Za-z_][\w$]*)"
     r"|(?P<word>[A-Za-z_$][\w$]*)",
     re.DOTALL,
 )
@@ -86,7 +89,8 @@ class Page:
 
     def rest_is_comment(self, offset: int) -> bool:
         """Say whether nothing but white space and comments that end on this line follow on it."""
-        return re.fullmatch(r"[ \t]*(?:/\*[^\n]*?\*/[ \t]*)*(?://.*)?", self.data[offset : self.line_end(offset)]) is not None
+        rest = self.data[offset : self.line_end(offset)]
+        return re.fullmatch(r"[ \t]*(?:/\*[^\n]*?\*/[ \t]*)*(?://.*)?", rest) is not None
 
     def unit(self, span: Span) -> str:
         """Guess one step of indentation from the lines of a span: the first one that is deeper than its first line."""
