@@ -115,7 +115,7 @@ def _store(name: str, value: str, word: Word, opened: Opened) -> None:
         "-U": lambda: opened.undefines.append(value),
         "-G": lambda: opened.parameters.append(value),
         "--top": lambda: opened.tops.extend(part for part in value.split(",") if part),
-        "-v": lambda: opened.library_files.extend((path, word) for path in _paths(word, value.partition("=")[2] or value)),
+        "-v": lambda: opened.library_files.extend((path, word) for path in _paths(word, value.rpartition("=")[2])),
         "-y": lambda: opened.library_dirs.extend(_paths(word, value)),
         "-Y": lambda: opened.library_extensions.extend(part for part in value.split(",") if part),
         "--isystem": lambda: opened.options.extend(("--isystem", ",".join(_paths(word, value)))),
@@ -166,7 +166,8 @@ def configure(driver: Driver, words: Sequence[str]) -> list[str]:
         fine = _parse(driver, words) and driver.processOptions()
     if not fine:
         errors = captured.messages("error")
-        raise UserError(errors[0] if errors else "slang refused the arguments", help="see slang's manual for its options")
+        message = errors[0] if errors else "slang refused the arguments"
+        raise UserError(message, help="see slang's manual for its options")
     return captured.messages("warning")
 
 

@@ -1,8 +1,13 @@
 """Bits: where a select lies in its flattened variable; bit 0 is the last bit, as in a concatenation of all elements."""
 
+# pyright: reportUnknownMemberType=false, reportUnknownVariableType=false, reportUnknownArgumentType=false
+# pyright: reportUnnecessaryComparison=false
+# (pyslang's stubs leave `span[…]` undefined and do not tell what can be None)
+
 from collections.abc import Callable
 from dataclasses import dataclass
 
+from pyslang import SVInt
 from pyslang.ast import (
     ConversionExpression,
     ElementSelectExpression,
@@ -54,11 +59,7 @@ def width_of(kind: Type) -> int:
 
 def integer(value: object) -> int | None:
     """Give a constant's value as an int, None for anything with x or z, or no number."""
-    if isinstance(value, int):
-        return int(value)
-    if value is None or not hasattr(value, "hasUnknown") or value.hasUnknown:
-        return None
-    return int(value)  # type: ignore[call-overload]
+    return int(value) if isinstance(value, SVInt) and not value.hasUnknown else None
 
 
 def extent(expression: Expression, value: IndexValue) -> Extent | None:

@@ -1,5 +1,9 @@
 """Clocked blocks: one `always` with an edge event, taken apart."""
 
+# pyright: reportUnknownMemberType=false, reportUnknownVariableType=false, reportUnknownArgumentType=false
+# pyright: reportUnnecessaryComparison=false
+# (pyslang's stubs leave `span[…]` undefined and do not tell what can be None)
+
 import re
 from collections.abc import Iterator
 
@@ -35,6 +39,7 @@ from rewriter.model.statement import Block
 _DIRECTIVE = re.compile(rb"`(?:ifn?def|elsif|else|endif)\b")
 _ITEM_LISTS = (SyntaxKind.GenerateBlock, SyntaxKind.ModuleDeclaration, SyntaxKind.InterfaceDeclaration,
                SyntaxKind.ProgramDeclaration, SyntaxKind.GenerateRegion)
+_NO_EDGE = EdgeKind(0)  # its name is missing in the stubs
 _ALWAYS = (ProceduralBlockKind.Always, ProceduralBlockKind.AlwaysFF)
 
 
@@ -42,7 +47,7 @@ def is_clocked(block: ProceduralBlockSymbol) -> bool:
     """Say whether a procedural block is an `always` or `always_ff` with an edge event."""
     if block.procedureKind not in _ALWAYS:
         return False
-    return any(event.edge is not EdgeKind.None_ for timing in _timings(block) for event in _signals(timing))
+    return any(event.edge is not _NO_EDGE for timing in _timings(block) for event in _signals(timing))
 
 
 def _timings(block: ProceduralBlockSymbol) -> Iterator[TimingControl]:
@@ -88,7 +93,7 @@ def lower_block(block: ProceduralBlockSymbol, expressions: Expressions, locator:
     if isinstance(timed, TimedStatement):
         body = statements.lower(timed.stmt)
         split = split_events(events, body)
-        if any(event.edge is EdgeKind.None_ or event.edge is EdgeKind.BothEdges for event in _signals(timed.timing)):
+        if any(event.edge is _NO_EDGE or event.edge is EdgeKind.BothEdges for event in _signals(timed.timing)):
             split = type(split)(None, (), body, "an event has no edge, or both")
         if split.clock is None:
             statements.trap("clock-unclear", span, split.problem)
@@ -98,8 +103,8 @@ def lower_block(block: ProceduralBlockSymbol, expressions: Expressions, locator:
         clock, resets, synchronous = None, (), body
         statements.trap("timing-control", span, "the event control stands inside the block")
     return ClockedBlock(
-        scope=expressions.names.scope(block), span=span, keyword=syntax.keyword.rawText, keyword_span=keyword, clock=clock,
-        resets=resets, body=body, synchronous=synchronous, traps=tuple(statements.traps),
+        scope=expressions.names.scope(block), span=span, keyword=syntax.keyword.rawText, keyword_span=keyword,
+        clock=clock, resets=resets, body=body, synchronous=synchronous, traps=tuple(statements.traps),
         disabled=_disabled(syntax, span, locator, texts), unbraced=_is_unbraced(syntax),
         label=body.label if isinstance(body, Block) else "")
 
@@ -147,4 +152,4 @@ def event_signals(block: ProceduralBlockSymbol) -> Iterator[Expression]:
     """Give the signals of a block's edge events."""
     if block.procedureKind in _ALWAYS:
         for timing in _timings(block):
-            yield from (event.expr for event in _signals(timing) if event.edge is not EdgeKind.None_)
+            yield from (event.expr for event in _signals(timing) if event.edge is not _NO_EDGE)

@@ -1,5 +1,9 @@
 """Calls: what a function reads besides its arguments, and whether it does anything but return a value."""
 
+# pyright: reportUnknownMemberType=false, reportUnknownVariableType=false, reportUnknownArgumentType=false
+# pyright: reportUnnecessaryComparison=false
+# (pyslang's stubs leave `span[…]` undefined and do not tell what can be None)
+
 from dataclasses import dataclass
 
 from pyslang.ast import (

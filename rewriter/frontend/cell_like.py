@@ -1,5 +1,9 @@
 """Existing gating cells: a latch whose output is joined with the clock that it follows."""
 
+# pyright: reportUnknownMemberType=false, reportUnknownVariableType=false, reportUnknownArgumentType=false
+# pyright: reportUnnecessaryComparison=false
+# (pyslang's stubs leave `span[…]` undefined and do not tell what can be None)
+
 from pyslang.ast import (
     AssignmentExpression,
     BinaryExpression,
@@ -43,12 +47,12 @@ def _is_latch(block: ProceduralBlockSymbol) -> bool:
     if block.procedureKind is ProceduralBlockKind.AlwaysLatch:
         return True
     statement = block.body
-    if block.procedureKind is not ProceduralBlockKind.Always or is_clocked(block) or not isinstance(statement, TimedStatement):
+    if block.procedureKind is not ProceduralBlockKind.Always or not isinstance(statement, TimedStatement):
         return False
     statement = statement.stmt
     while isinstance(statement, BlockStatement):
         statement = statement.body
-    return isinstance(statement, ConditionalStatement) and statement.ifFalse is None
+    return isinstance(statement, ConditionalStatement) and statement.ifFalse is None and not is_clocked(block)
 
 
 def _written(block: ProceduralBlockSymbol) -> set[Symbol]:

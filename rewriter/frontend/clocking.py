@@ -1,5 +1,9 @@
 """Clocks and asynchronous resets of a body: what drives them, and where they are read as data."""
 
+# pyright: reportUnknownMemberType=false, reportUnknownVariableType=false, reportUnknownArgumentType=false
+# pyright: reportUnnecessaryComparison=false
+# (pyslang's stubs leave `span[…]` undefined and do not tell what can be None)
+
 from collections.abc import Iterable, Iterator
 
 from pyslang.analysis import AnalysisManager
@@ -13,6 +17,7 @@ from pyslang.ast import (
     ExpressionKind,
     MemberAccessExpression,
     NamedValueExpression,
+    PortConnection,
     PortSymbol,
     ProceduralBlockSymbol,
     RangeSelectExpression,
@@ -56,8 +61,8 @@ class EventPorts:
     def _find(self, body: Body) -> frozenset[str]:
         symbols = {name.symbol for signal in event_expressions(body) for name in names_in(signal)}
         symbols |= {name.symbol for expression in self.connections(body) for name in names_in(expression)}
-        ports = (port for port in body.symbol.portList if isinstance(port, PortSymbol))
-        return frozenset(port.name for port in ports if port.internalSymbol is not None and port.internalSymbol in symbols)
+        ports = [p for p in body.symbol.portList if isinstance(p, PortSymbol) and p.internalSymbol is not None]
+        return frozenset(port.name for port in ports if port.internalSymbol in symbols)
 
 
 def event_expressions(body: Body) -> Iterator[Expression]:
@@ -99,50 +104,62 @@ def data_uses(body: Body, clocks: Iterable[Symbol], locator: Locator) -> dict[Sy
     uses: dict[Symbol, Span] = {}
     origin: dict[Symbol, Symbol] = {clock: clock for clock in clocks}
     before = 0
-    while origin and len(origin) > before:
+    while len(origin) > before:
         before = len(origin)
-        aliases: dict[Symbol, Symbol] = {}
-        for name in _data_reads(body, origin, aliases):
+        reads = _DataReads(body, origin)
+        for name in reads.found():
             uses.setdefault(origin[name.symbol], locator.span(name.sourceRange))
-        origin.update({alias: origin[clock] for alias, clock in aliases.items() if alias not in origin})
+        for alias, clock in reads.aliases.items():
+            origin.setdefault(alias, origin[clock])
     return uses
 
 
-def _data_reads(body: Body, clocks: dict[Symbol, Symbol], aliases: dict[Symbol, Symbol]) -> Iterator[ValueExpressionBase]:
-    hits: list[ValueExpressionBase] = []
+class _DataReads:
+    """Walk a body once for reads of clocks that are no events, no writes, no aliases and no plain connections."""
 
-    def read(name: ValueExpressionBase) -> None:
-        if name.symbol in clocks:
-            hits.append(name)
+    def __init__(self, body: Body, clocks: dict[Symbol, Symbol]) -> None:
+        self._body = body
+        self._clocks = clocks
+        self._hits: list[ValueExpressionBase] = []
+        self._other: set[tuple[int, int]] = set()
+        self.aliases: dict[Symbol, Symbol] = {}
 
-    def assign(symbol: ContinuousAssignSymbol) -> VisitAction:
+    def found(self) -> Iterator[ValueExpressionBase]:
+        """Give every such read."""
+        self._body.symbol.visit(lookup_table={
+            ExpressionKind.NamedValue: self._read, ExpressionKind.Assignment: self._write,
+            SymbolKind.ContinuousAssign: self._assign, SymbolKind.ProceduralBlock: self._block,
+            SymbolKind.Instance: _skip,
+        })
+        yield from (hit for hit in self._hits if _key(hit) not in self._other)
+        for _, child in self._body.children:
+            for connection in child.portConnections:
+                yield from self._connected(connection)
+
+    def _read(self, name: ValueExpressionBase) -> None:
+        if name.symbol in self._clocks:
+            self._hits.append(name)
+
+    def _write(self, assignment: AssignmentExpression) -> None:
+        self._other.update(_key(_root(part)) for part in parts_of(assignment.left))
+
+    def _assign(self, symbol: ContinuousAssignSymbol) -> VisitAction:
         pair = _plain_alias(symbol)
-        if pair is None or pair[1] not in clocks:
+        if pair is None or pair[1] not in self._clocks:
             return VisitAction.Advance
-        aliases[pair[0]] = pair[1]
+        self.aliases[pair[0]] = pair[1]
         return VisitAction.Skip
 
-    def edges(block: ProceduralBlockSymbol) -> VisitAction:
-        skipped.update(_key(signal) for signal in event_signals(block))
+    def _block(self, block: ProceduralBlockSymbol) -> VisitAction:
+        self._other.update(_key(signal) for signal in event_signals(block))
         return VisitAction.Advance
 
-    def write(assignment: AssignmentExpression) -> None:
-        skipped.update(_key(_root(part)) for part in parts_of(assignment.left))
-
-    skipped: set[tuple[int, int]] = set()
-    body.symbol.visit(lookup_table={
-        ExpressionKind.NamedValue: read, SymbolKind.ContinuousAssign: assign, SymbolKind.ProceduralBlock: edges,
-        ExpressionKind.Assignment: write, SymbolKind.Instance: _skip,
-    })
-    yield from (hit for hit in hits if _key(hit) not in skipped)
-    for _, child in body.children:
-        for connection in child.portConnections:
-            expression = connection.expression
-            port = connection.port
-            if isinstance(port, PortSymbol) and port.direction is ArgumentDirection.Out:
-                continue
-            if expression is not None and not isinstance(_plain(expression), NamedValueExpression):
-                yield from (name for name in names_in(expression) if name.symbol in clocks)
+    def _connected(self, connection: PortConnection) -> Iterator[ValueExpressionBase]:
+        expression, port = connection.expression, connection.port
+        driven = isinstance(port, PortSymbol) and port.direction is ArgumentDirection.Out
+        if expression is None or driven or isinstance(_plain(expression), NamedValueExpression):
+            return
+        yield from (name for name in names_in(expression) if name.symbol in self._clocks)
 
 
 def _root(expression: Expression) -> Expression:

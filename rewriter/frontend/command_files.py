@@ -46,14 +46,14 @@ def _expand(words: Sequence[Word], open_lists: tuple[str, ...]) -> Iterator[Word
             continue
         if position + 1 == len(words):
             raise word.error(f"{word.text} needs the name of a file list", "write `-f LIST`")
-        yield from _open_list(words[position + 1], _LISTS[word.text], open_lists)
+        yield from _open_list(words[position + 1], relative=_LISTS[word.text], open_lists=open_lists)
         position += 2
 
 
-def _open_list(word: Word, relative: bool, open_lists: tuple[str, ...]) -> Iterator[Word]:
+def _open_list(word: Word, *, relative: bool, open_lists: tuple[str, ...]) -> Iterator[Word]:
     path = word.path()
     if path in open_lists:
-        raise word.error(f"the file list {word.text} includes itself", "remove the -f or -F line that closes the circle")
+        raise word.error(f"the file list {word.text} includes itself", "remove the line that closes the circle")
     text = read_bytes(word, path, "file list").decode("utf-8", "replace")
     folder = str(Path(path).parent) if relative else word.folder
     yield from _expand(list(split(text, path, folder, os.environ)), (*open_lists, path))
@@ -75,7 +75,7 @@ def read_bytes(word: Word, path: str, what: str) -> bytes:
     except OSError as reason:
         raise word.error(f"cannot read the {what} {path}: {reason.strerror}", "check its permissions") from None
     if b"\0" in data:
-        raise word.error(f"{path} is no text: it holds a zero byte", f"a {what} is plain text; UTF-16 and binary files are not read")
+        raise word.error(f"{path} is no text: it holds a zero byte", "UTF-16 and binary files are not read")
     return data
 
 

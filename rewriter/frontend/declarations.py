@@ -1,8 +1,11 @@
 """Declarations: how variables were declared, as text that declares a copy."""
 
+# pyright: reportUnknownMemberType=false, reportUnknownVariableType=false, reportUnknownArgumentType=false
+# pyright: reportUnnecessaryComparison=false
+# (pyslang's stubs leave `span[…]` undefined and do not tell what can be None)
+
 from pyslang.ast import Compilation, NetSymbol, Symbol, ValueSymbol
 from pyslang.syntax import (
-    DataTypeSyntax,
     DeclaratorSyntax,
     ImplicitTypeSyntax,
     IntegerTypeSyntax,

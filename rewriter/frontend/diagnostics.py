@@ -1,13 +1,16 @@
 """What slang prints: its own text for errors in the RTL, and its complaints about arguments."""
 
+# pyright: reportUnknownMemberType=false, reportUnknownVariableType=false, reportUnknownArgumentType=false
+# pyright: reportUnnecessaryComparison=false
+# (pyslang's stubs leave `span[…]` undefined and do not tell what can be None)
+
 import os
 import sys
 import tempfile
-from collections.abc import Iterator
+from collections.abc import Generator
 from contextlib import contextmanager
 from dataclasses import dataclass
-
-import pyslang
+from importlib.metadata import version
 
 from rewriter.model.errors import UserError
 
@@ -20,9 +23,9 @@ def check_version() -> None:
     Raises:
         UserError: pyslang is older than 12.1.
     """
-    found = tuple(int(part) for part in pyslang.__version__.split(".")[:2])
-    if found < MINIMUM:
-        raise UserError(f"pyslang {pyslang.__version__} is too old", help="pip install 'pyslang>=12.1,<13'")
+    installed = version("pyslang")
+    if tuple(int(part) for part in installed.split(".")[:2]) < MINIMUM:
+        raise UserError(f"pyslang {installed} is too old", help="pip install 'pyslang>=12.1,<13'")
 
 
 @dataclass
@@ -38,7 +41,7 @@ class Captured:
 
 
 @contextmanager
-def captured_stderr() -> Iterator[Captured]:
+def captured_stderr() -> Generator[Captured]:
     """Catch what slang's command line parser writes straight to file descriptor 2."""
     captured = Captured()
     sys.stderr.flush()

@@ -1,5 +1,9 @@
 """Drivers: what drives a variable; combinational logic is lowered only when somebody asks."""
 
+# pyright: reportUnknownMemberType=false, reportUnknownVariableType=false, reportUnknownArgumentType=false
+# pyright: reportUnnecessaryComparison=false
+# (pyslang's stubs leave `span[…]` undefined and do not tell what can be None)
+
 from pyslang.analysis import AnalysisManager, DriverFlags, DriverKind, DriverSource, ValueDriver
 from pyslang.ast import (
     AssignmentExpression,

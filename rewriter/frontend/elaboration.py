@@ -1,5 +1,9 @@
 """The one owner of every slang object: dropping a compilation while symbols live would crash the process."""
 
+# pyright: reportUnknownMemberType=false, reportUnknownVariableType=false, reportUnknownArgumentType=false
+# pyright: reportUnnecessaryComparison=false
+# (pyslang's stubs leave `span[…]` undefined and do not tell what can be None)
+
 import difflib
 import os
 from collections.abc import Sequence

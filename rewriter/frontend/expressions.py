@@ -1,5 +1,9 @@
 """Expressions: slang's bound tree as the model's, each node with its text, key, self-determined size and value."""
 
+# pyright: reportUnknownMemberType=false, reportUnknownVariableType=false, reportUnknownArgumentType=false
+# pyright: reportUnnecessaryComparison=false
+# (pyslang's stubs leave `span[…]` undefined and do not tell what can be None)
+
 from collections.abc import Callable
 from typing import Any
 
@@ -25,6 +29,7 @@ from pyslang.ast import (
     ReplicationExpression,
     SimpleAssignmentPatternExpression,
     Statement,
+    Symbol,
     UnaryExpression,
     UnaryOperator,
     UnbasedUnsizedIntegerLiteral,
@@ -192,7 +197,8 @@ class Expressions:
         if condition.constant is not None:
             value = then.constant if condition.constant else other.constant
         return Conditional(
-            span, f"({condition.key}?{then.key}:{other.key})", max(then.width, other.width) if expression.type.isIntegral else 0,
+            span, f"({condition.key}?{then.key}:{other.key})",
+            max(then.width, other.width) if expression.type.isIntegral else 0,
             then.signed and other.signed, value, copyable, condition=condition, then=then, other=other)
 
     def _concatenation(self, expression: ConcatenationExpression, count: int = 1, prefix: str = "",
@@ -210,8 +216,7 @@ class Expressions:
         inner = expression.concat
         if count.constant is None or not isinstance(inner, ConcatenationExpression):
             return self._opaque(expression)
-        lowered = self._concatenation(inner, count.constant, f"{count.key}*", expression)
-        return lowered
+        return self._concatenation(inner, count.constant, f"{count.key}*", expression)
 
     def _element(self, expression: ElementSelectExpression) -> Expr:
         index = self.lower(expression.selector)
@@ -273,9 +278,11 @@ class Expressions:
                       kind.isSigned, None, copyable, kind=expression.kind.name, operands=reads)
 
 
-def names_in(expression: Expression | Statement) -> list[ValueExpressionBase]:
+def names_in(part: Expression | Statement | Symbol) -> list[ValueExpressionBase]:
+    """Give every name that an expression, statement or block uses, in source order."""
     found: list[ValueExpressionBase] = []
-    expression.visit(lookup_table={ExpressionKind.NamedValue: found.append, ExpressionKind.HierarchicalValue: found.append})
+    part.visit(lookup_table={
+        ExpressionKind.NamedValue: found.append, ExpressionKind.HierarchicalValue: found.append})
     return found
 
 

@@ -1,5 +1,9 @@
 """Module bodies: clocked blocks, and the variables they touch with everything else that writes them."""
 
+# pyright: reportUnknownMemberType=false, reportUnknownVariableType=false, reportUnknownArgumentType=false
+# pyright: reportUnnecessaryComparison=false
+# (pyslang's stubs leave `span[…]` undefined and do not tell what can be None)
+
 from collections.abc import Iterator
 from dataclasses import dataclass
 

@@ -1,5 +1,9 @@
 """Names: paths of symbols within a module body."""
 
+# pyright: reportUnknownMemberType=false, reportUnknownVariableType=false, reportUnknownArgumentType=false
+# pyright: reportUnnecessaryComparison=false
+# (pyslang's stubs leave `span[…]` undefined and do not tell what can be None)
+
 from pyslang.ast import (
     EnumValueSymbol,
     GenvarSymbol,
@@ -56,8 +60,7 @@ class Names:
         path = symbol.hierarchicalPath
         owner = symbol.parentScope.containingInstance  # none for what packages hold
         inside = owner is not None and owner == self._body
-        if path.startswith(self._prefix):
-            path = path[len(self._prefix) :]
+        path = path.removeprefix(self._prefix)
         if is_local(symbol):
             scope, dot, name = path.rpartition(".")
             path = f"{scope}{dot}@{symbol.location.offset}.{name}"

@@ -1,5 +1,9 @@
 """Statements: a clocked block's body as the model's tree, with the text of every part."""
 
+# pyright: reportUnknownMemberType=false, reportUnknownVariableType=false, reportUnknownArgumentType=false
+# pyright: reportUnnecessaryComparison=false
+# (pyslang's stubs leave `span[…]` undefined and do not tell what can be None)
+
 from collections.abc import Callable
 from typing import Any
 
@@ -138,14 +142,18 @@ class Statements:
         declared = [part for part in parts if isinstance(part, VariableDeclStatement)]
         body = tuple(self.lower(part) for part in parts if not isinstance(part, VariableDeclStatement))
         name, end_name = syntax.blockName, syntax.endBlockName
-        begin = self.whole(pyslang.SourceRange(syntax.begin.range.start, name.sourceRange.end if name else syntax.begin.range.end))
-        end = self.whole(pyslang.SourceRange(syntax.end.range.start, end_name.sourceRange.end if end_name else syntax.end.range.end))
+        begin = self._up_to(syntax.begin, name)
         if syntax.label is not None:
             begin = Span(span.file, self._locator.span(syntax.label.sourceRange).start, begin.end)
         label = name.name.valueText if name else syntax.label.name.valueText if syntax.label is not None else ""
-        if len(body) == 1 and isinstance(body[0], Empty) and isinstance(inner, EmptyStatement) and not len(syntax.items):
+        if isinstance(inner, EmptyStatement) and not len(syntax.items):
             body = ()
-        return Block(span, begin, end, label, self._declarations(declared), body)
+        return Block(span, begin, self._up_to(syntax.end, end_name), label, self._declarations(declared), body)
+
+    def _up_to(self, keyword: Token, name: SyntaxNode | None) -> Span:
+        """Give the span of `begin` or `end` with the name that follows it."""
+        end = keyword.range.end if name is None else name.sourceRange.end
+        return self.whole(pyslang.SourceRange(keyword.range.start, end))
 
     def _declarations(self, declared: list[VariableDeclStatement]) -> tuple[LocalDeclaration, ...]:
         """Group declared variables by the declaration they stand in (`int a, b;`)."""
@@ -164,7 +172,8 @@ class Statements:
     def _if(self, statement: ConditionalStatement) -> Statement:
         syntax = statement.syntax
         conditions = statement.conditions
-        if not isinstance(syntax, ConditionalStatementSyntax) or len(conditions) != 1 or conditions[0].pattern is not None:
+        matching = len(conditions) != 1 or conditions[0].pattern is not None
+        if matching or not isinstance(syntax, ConditionalStatementSyntax):
             return self._opaque(statement)
         span = self._span(statement)
         condition = self._expressions.lower(conditions[0].expr)
@@ -229,7 +238,7 @@ class Statements:
             if symbol is None:
                 return self._opaque(statement)
             outer.append(self._expressions.names.path(symbol))
-        starts = [write.right for write in writes] + [s.initializer for s in statement.loopVars if s.initializer is not None]
+        starts = [*(write.right for write in writes), *(s.initializer for s in statement.loopVars)]
         variables = frozenset((*inner, *outer))
         tests = [e for e in (statement.stopExpr, *statement.steps) if e is not None]
         head_reads = self._reads(starts) | (self._reads(tests) - variables)
@@ -266,7 +275,7 @@ class Statements:
         return Loop(span, head, keyword, inner, outer, frozenset(), body)
 
     def _reads(self, expressions: list[Expression]) -> frozenset[str]:
-        return frozenset(name for expression in expressions for name in self._expressions.lower(expression).reads())
+        return frozenset(name for part in expressions for name in self._expressions.lower(part).reads())
 
     def _expression(self, statement: ExpressionStatement) -> Statement:
         expression = statement.expr
@@ -283,10 +292,7 @@ class Statements:
         if targets is None:
             return self._opaque(statement)
         span = self._span(statement)
-        for target in targets:
-            self._locator.span(expression.left.sourceRange)
-            if self._locator.macro_at(expression.left.sourceRange.start):
-                self.trap("inside-macro", target.span, self._locator.macro_at(expression.left.sourceRange.start) or "")
+        self.whole(expression.left.sourceRange)
         timing = expression.timingControl
         delay = None
         if timing is not None:

@@ -1,5 +1,9 @@
 """Targets: what an assignment writes, down to the bits."""
 
+# pyright: reportUnknownMemberType=false, reportUnknownVariableType=false, reportUnknownArgumentType=false
+# pyright: reportUnnecessaryComparison=false
+# (pyslang's stubs leave `span[…]` undefined and do not tell what can be None)
+
 from collections.abc import Iterator
 
 from pyslang.ast import (
