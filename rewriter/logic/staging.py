@@ -12,6 +12,7 @@ WRAPPERS = (RISING, FALLING)
 
 _STUB = f"(input wire {PORTS.clock}, input wire {PORTS.wake}, input wire {PORTS.test}, output wire {PORTS.output}); endmodule"
 _WRAPPER = re.compile(rb"\bmodule\s+(%s|%s)\b.*?\bendmodule\b" % (FALLING.encode(), RISING.encode()), re.DOTALL)
+_MODULE = re.compile(r"\bmodule\s+(\w+)")
 _PLAIN = re.compile(r"[\w./+\-]+\Z")
 
 
@@ -23,12 +24,14 @@ class Stage:
         folder: the work folder.
         side: its name, `gold` or `gate`.
         source: what is staged.
+        stubs: modules without source, ports and parameters only.
         mended: declarations whose initial value was dropped, as text.
     """
 
     folder: Path
     side: str
     source: RtlSource
+    stubs: str = ""
     mended: list[str] = field(default_factory=list[str])
 
     def write(self) -> None:
@@ -42,8 +45,8 @@ class Stage:
             path = self._path(text.path)
             path.parent.mkdir(parents=True, exist_ok=True)
             path.write_bytes(data)
-        stubs = "".join(f"module {name} {_STUB}\n" for name in WRAPPERS if name not in found)
-        (self.folder / self.side / "stillclock_stubs.sv").write_text(stubs, encoding="ascii")
+        stubs = self.stubs + "".join(f"\nmodule {name} {_STUB}\n" for name in WRAPPERS if name not in found)
+        (self.folder / self.side / "stillclock_stubs.sv").write_text(stubs, encoding="utf-8")
         for directory in self.source.include_dirs:
             self._path(directory).mkdir(parents=True, exist_ok=True)
 
@@ -56,7 +59,7 @@ class Stage:
         """
         source = self.source
         words = [*extra, "--top", top]
-        for name in WRAPPERS:
+        for name in (*WRAPPERS, *_MODULE.findall(self.stubs)):
             words += ["--blackboxed-module", name]
         for option, values in (("-D", source.defines), ("-U", source.undefines), ("-G", source.parameters)):
             for value in values:
@@ -88,23 +91,28 @@ class Stage:
             Whether anything was changed.
         """
         changed = False
-        for file, line in _net_initialisers(messages):
+        for file, line in sorted(_net_initialisers(messages), reverse=True):
             path = self._path(file)
-            lines = path.read_bytes().split(b"\n")
-            before = lines[line - 1]
-            after = _INITIALISER.sub(rb"\1;", before, count=1)
+            before = path.read_bytes()
+            after = self._without_initialiser(before, line)
             if after != before:
-                lines[line - 1] = after
-                path.write_bytes(b"\n".join(lines))
-                self.mended.append(before.decode("utf-8", "replace").strip())
+                path.write_bytes(after)
                 changed = True
         return changed
+
+    def _without_initialiser(self, data: bytes, line: int) -> bytes:
+        for found in _INITIALISED.finditer(data):
+            first = data.count(b"\n", 0, found.start()) + 1
+            if first <= line <= first + found[0].count(b"\n"):
+                self.mended.append(" ".join(found[1].decode("utf-8", "replace").split()))
+                return data[: found.start(2)] + b"\n" * found[2].count(b"\n") + data[found.end(2) :]
+        return data
 
     def _path(self, path: str) -> Path:
         return self.folder / self.side / PurePosixPath(path).relative_to("/")
 
 
-_INITIALISER = re.compile(rb"^(\s*(?:logic|reg|bit|var)\b[^=;]*?)\s*=[^;]*;")
+_INITIALISED = re.compile(rb"(?<!automatic )(\b(?:logic|reg|bit|var)\b[^=;]*?)(=[^;]*);")
 _MESSAGE = re.compile(rf"^/?{MOUNT[1:]}/\w+(/.*?):(\d+)(?::\d+)?: .*(?:error|ERROR)")
 
 

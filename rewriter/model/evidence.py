@@ -26,6 +26,7 @@ class ProofJob:
         cell_texts: name -> text of the wrapper files whose lemma is to be proved.
         test_port: name of the top-level override input (None: found from the cells' test pins).
         test_active_low: the override is active when 0.
+        stubs: SystemVerilog modules, ports and parameters only, for every module without source.
     """
 
     gold: RtlSource | None
@@ -35,6 +36,7 @@ class ProofJob:
     test_port: str | None
     test_active_low: bool = False
     limits: Limits = Limits()
+    stubs: str = ""
 
 
 @dataclass(frozen=True)

@@ -2,12 +2,14 @@
 
 import time
 from collections.abc import Callable
+from concurrent.futures import ThreadPoolExecutor
 from dataclasses import replace
 from typing import TypeVar
 
 from rewriter.logic.blast import UnsupportedCellError
 from rewriter.logic.cone import LoopError
 from rewriter.logic.elaborate import Elaborated, elaborate
+from rewriter.logic.engine import compile_once
 from rewriter.logic.lemma import PROVED, prove_cells
 from rewriter.logic.netlist import Module, Netlist
 from rewriter.model.cells import FALLING, RISING
@@ -54,10 +56,14 @@ class _Run:
 
     def result(self) -> ProofResult:
         """Do all of it."""
-        elaborated = self._elaborate(memories=True)
-        if elaborated.sides and self._memories_differ(elaborated):
-            elaborated = self._elaborate(memories=False)
-        lemma = self._timed("cell", lambda: prove_cells(self._cell_texts(), self._left()))
+        compile_once(self.progress)
+        with ThreadPoolExecutor(1) as pool:
+            # The cells are proved beside the elaboration: both wait for the engine.
+            cells = pool.submit(prove_cells, self._cell_texts())
+            elaborated = self._elaborate(memories=True)
+            if elaborated.sides and self._memories_differ(elaborated):
+                elaborated = self._elaborate(memories=False)
+            lemma = self._timed("cell", cells.result)
         if elaborated.sides:
             self.notes += elaborated.notes
             self._prove(elaborated.sides[0], elaborated.sides[-1], lemma)
@@ -70,7 +76,7 @@ class _Run:
 
     def _elaborate(self, *, memories: bool) -> Elaborated:
         sources = {"gate": self.job.gate} if self.job.gold is None else {"gold": self.job.gold, "gate": self.job.gate}
-        done = elaborate(sources, self.job.top, self._left(), self.progress, memories=memories)
+        done = elaborate(sources, self.job.top, self._left(), memories=memories, stubs=self.job.stubs)
         for stage, seconds in zip(("elaborate", "read"), done.seconds, strict=True):
             self.seconds[stage] = self.seconds.get(stage, 0.0) + seconds
         return done

@@ -6,7 +6,7 @@ from typing import cast
 
 from rewriter.logic.aig import FALSE, TRUE, Aig, Lit
 from rewriter.logic.blast import Bit, UnsupportedCellError, Word, bit_and, bit_or
-from rewriter.logic.cone import Cone, LoopError
+from rewriter.logic.cone import Cone, LoopError, contested
 from rewriter.logic.netlist import Cell, Module, Name
 from rewriter.logic.solver import Solver
 from rewriter.logic.state import Register, registers
@@ -111,7 +111,8 @@ class Side:
         self.module = module
         self.transparent = transparent
         self.label = "gate" if partner else "gold"
-        self.registers = registers(module)
+        self.contested = contested(module)
+        self.registers = [r for r in registers(module) if r.net not in self.contested]
         self.keys = _keys(self.registers, partner, self.label)
         self.by_key: Mapping[Key, Register] = {self.keys[r.net]: r for r in self.registers}
         self.memories = {str(c.parameters["MEMID"]).lstrip("\\"): c for c in module.cells if c.type == "$mem_v2"}
@@ -119,9 +120,6 @@ class Side:
         self._busy: set[int] = set()
         self._origins = self._collect()
         self.cone = Cone(shared.aig, module, self._leaf, shared.words)
-        for net in self._origins:
-            if net in self.cone.drivers:
-                raise UnsupportedCellError(f"several drivers of {self.cone.describe(net)}")
 
     def gating_cells(self) -> dict[str, Gating]:
         """Give our cells by instance name."""
@@ -136,9 +134,7 @@ class Side:
         origins: dict[int, Register | Source | tuple[Cell, str, int]] = {}
 
         def add(net: object, origin: Register | Source | tuple[Cell, str, int]) -> None:
-            if isinstance(net, int):
-                if net in origins:
-                    raise UnsupportedCellError(f"several drivers of one net in {self.module.definition}")
+            if isinstance(net, int) and net not in self.contested:
                 origins[net] = origin
 
         for name, port in self.module.ports.items():
@@ -163,16 +159,24 @@ class Side:
         if isinstance(origin, Source):
             return self._free((origin.kind, origin.name, origin.place), origin)
         if origin is None:
-            names = cone.module.names.get(net)
-            if not names:
-                return FALSE, TRUE
-            return self._free(("open", names[0].variable, names[0].place), Source("open", *_plain(names[0])))
+            return self._open(net)
         if net in self._busy:
             raise LoopError(cone.describe(net))
         self._busy.add(net)
         value = self._output(*origin)
         self._busy.discard(net)
         return value
+
+    def _open(self, net: int) -> Bit:
+        """Give a net without a driver of its own, or a bus: free, but the same on both sides."""
+        names = self.module.names.get(net)
+        if net in self.contested:
+            drivers = [cell for cell in self.module.cells if any(net in nets for nets in cell.outputs.values())]
+            if not names or not all(cell.is_instance or cell.type == "$tribuf" for cell in drivers):
+                raise UnsupportedCellError(f"several drivers of {names[0] if names else 'an unnamed net'}")
+        if not names:
+            return FALSE, TRUE
+        return self._free(("open", names[0].variable, names[0].place), Source("open", *_plain(names[0])))
 
     def _free(self, key: Key, source: Source) -> Bit:
         return self.shared.variable(key, source), FALSE
