@@ -30,10 +30,15 @@ def gated_clocks(design: Design, definition: Definition) -> dict[str, GatedClock
     return found
 
 
+def gated_by(name: str, gated: dict[str, GatedClock]) -> GatedClock | None:
+    """Find the cell that makes a clock; a cell is written by names as its generate scope sees them."""
+    return gated.get(name.rpartition(".")[2])
+
+
 def root_clock(name: str, gated: dict[str, GatedClock]) -> str:
     """Follow our own cells back to the clock that feeds them."""
     seen: set[str] = set()
-    while name in gated and name not in seen:
-        seen.add(name)
-        name = gated[name].clk
+    while (cell := gated_by(name, gated)) and cell.gclk not in seen:
+        seen.add(cell.gclk)
+        name = cell.clk
     return name

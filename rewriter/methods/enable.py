@@ -7,7 +7,7 @@ from rewriter.analysis import traps
 from rewriter.analysis.branches import around, control_reads, value_reads
 from rewriter.analysis.copyable import CannotCopyError
 from rewriter.analysis.domains import Sources
-from rewriter.analysis.existing import gated_clocks
+from rewriter.analysis.existing import gated_by, gated_clocks
 from rewriter.analysis.registers import Group, groups, plain_scope
 from rewriter.analysis.temporaries import Temporaries, find
 from rewriter.analysis.wake import Wake, wake_of
@@ -79,7 +79,7 @@ class _Finder:
 
     def judge(self, group: Group, block_reason: Reason | None) -> Outcome:
         """Give the outcome of one register."""
-        if self.block.clock and self.block.clock.signal.key in self.sources.gated:
+        if self.block.clock and gated_by(self.block.clock.signal.key, self.sources.gated):
             return self.refuse(group, Reason("already-gated", f"on {self.block.clock.signal.key}"), holds=True)
         if group.array:
             return self.refuse(group, self.context.reason("array", group.assigns[0].span), holds=True)
