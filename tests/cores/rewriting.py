@@ -35,14 +35,13 @@ class Rewritten:
     @cached_property
     def changed(self) -> tuple[tuple[Path, Path], ...]:
         """Pairs of original and changed file."""
-        files = sorted(path for path in (self.folder / "rtl").rglob("*") if path.is_file())
+        files = _files(self.folder / "rtl")
         return tuple((_original(self.core, path.relative_to(self.folder / "rtl")), path) for path in files)
 
     @cached_property
     def rtl(self) -> Rtl:
-        """What a bench compiles."""
-        cells = tuple(sorted((self.folder / "cell").iterdir()))
-        return Rtl(replaced=self.changed, extra=cells, test_port=TEST_PORT)
+        """What a bench compiles; without any cell there is no test port either."""
+        return Rtl(self.changed, _files(self.folder / "cell"), TEST_PORT if self.gated else None)
 
     @cached_property
     def registers(self) -> dict[str, tuple[str, ...]]:
@@ -69,6 +68,10 @@ def rewrite(name: str, out: Path, *options: str) -> Rewritten:
 def stillclock(*arguments: str, folder: Path = Path()) -> Ran:
     """Run the tool of this checkout in a process of its own."""
     return run((sys.executable, "-m", "rewriter", *arguments), folder, environment={"SITE": str(SITE)})
+
+
+def _files(folder: Path) -> tuple[Path, ...]:
+    return tuple(sorted(path for path in folder.rglob("*") if path.is_file()))
 
 
 def instance(bank: dict[str, Any]) -> str:

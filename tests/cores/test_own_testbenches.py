@@ -15,6 +15,7 @@ from tests.cores.testbenches import CORES_WITH_BENCH, Benches
 
 pytestmark = [pytest.mark.core, pytest.mark.bench, pytest.mark.simulator, pytest.mark.engine, pytest.mark.slow]
 
+ALL_ARRAYS = ("logik_apbregs", "logik_cache")  # what holds in them are arrays written by a variable index
 Rewriter = Callable[[str], Rewritten]
 
 
@@ -25,14 +26,13 @@ def test_own_testbench_passes(core: str, rewritten: Rewriter, benches: Benches) 
     for bench in benches.of(core):
         run = bench(rewrite.rtl)
         assert run.passed, run.tail
-    assert rewrite.gated, f"{core}: no bank was gated"
+    assert bool(rewrite.gated) == (core not in ALL_ARRAYS), rewrite.report["totals"]
 
 
-@pytest.mark.parametrize("core", ["picorv32", "vexriscv_min", "logik_sha256"])
+@pytest.mark.parametrize("core", ["picorv32", "vexriscv_min"])
 def test_own_testbench_passes_with_the_override_on(core: str, rewritten: Rewriter, benches: Benches) -> None:
     """Gated blocks keep their conditions, so a design whose cells all run behaves the same."""
-    rtl = rewritten(core).rtl
-    run = benches.of(core)[0](rtl.with_override(1) if core != "logik_sha256" else rtl)
+    run = benches.of(core)[0](rewritten(core).rtl.with_override(1))
     assert run.passed, run.tail
 
 
