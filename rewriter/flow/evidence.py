@@ -4,8 +4,8 @@ import re
 from collections.abc import Iterator, Mapping
 
 from rewriter.model.design import Warning as Note
-from rewriter.model.evidence import CellEvidence, ProofResult
-from rewriter.model.plan import Bank, RegisterId
+from rewriter.model.evidence import CellEvidence, Mismatch, ProofResult
+from rewriter.model.plan import Bank, BlockId, RegisterId
 from rewriter.model.reasons import PAGES, EvidenceKind, Reason, Verdict
 from rewriter.model.rewrite import Rewrite
 from rewriter.model.run import Run
@@ -33,11 +33,33 @@ def pair(done: Rewrite, result: ProofResult) -> dict[str, tuple[CellEvidence, ..
 
 
 def rejected(run: Run, *, allow_unproved: bool) -> dict[RegisterId, Reason]:
-    """Give the registers that the proof sends back, with the reason; none when no engine was asked."""
+    """Give the registers that the proof sends back, with the reason; none when no engine was asked.
+
+    A register on its original clock that differs was harmed by the rewrite of its block, so the banks of the
+    block go back: the rest of the design need not suffer.
+    """
     if run.proof is None:
         return {}
+    harmed = {
+        register: Reason("disproved", f"the rewrite of its block changes {mismatch.detail}")
+        for mismatch in run.proof.mismatches
+        for block in _blocks(run, mismatch)
+        for bank in run.plan.banks
+        if bank.block == block
+        for register in bank.registers
+    }
     objections = ((bank, _objection(run, bank, allow_unproved=allow_unproved)) for bank in run.plan.banks)
-    return {register: reason for bank, reason in objections if reason for register in bank.registers}
+    return harmed | {register: reason for bank, reason in objections if reason for register in bank.registers}
+
+
+def _blocks(run: Run, mismatch: Mismatch) -> Iterator[BlockId]:
+    """Give the rewritten blocks that write the register of a mismatch."""
+    definitions = {module.definition for module in run.design.modules if mismatch.module in module.instances}
+    variable = _INDEX.sub("", mismatch.what)
+    for plan in run.plan.blocks:
+        if plan.block.definition in definitions and plan.banks:
+            if any(_INDEX.sub("", part.variable) == variable for register in plan.rest for part in register.parts):
+                yield plan.block
 
 
 def _objection(run: Run, bank: Bank, *, allow_unproved: bool) -> Reason | None:
@@ -62,7 +84,8 @@ def rejection_warnings(run: Run, back: Mapping[RegisterId, Reason]) -> Iterator[
         reason = back.get(bank.registers[0])
         if reason is None:
             continue
-        tables = [e.counterexample.table() for e in run.evidence.get(bank.cell, ()) if e.counterexample]
+        found = (*run.evidence.get(bank.cell, ()), *(run.proof.mismatches if run.proof else ()))
+        tables = [one.counterexample.table() for one in found if one.counterexample]
         head = f"bank {bank.name} is left out, {reason.word}" + (f": {reason.detail}" if reason.detail else "")
         yield Note("\n".join((head, *tables[:1])), help=_way_out(bank, reason))
 
