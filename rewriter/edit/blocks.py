@@ -4,6 +4,7 @@ from dataclasses import dataclass
 
 from rewriter.edit.site import Site
 from rewriter.edit.split import Splitter
+from rewriter.edit.temporaries import Temporaries
 from rewriter.edit.text import CODEC, CannotEditError, Page
 from rewriter.model.design import ClockedBlock, Module
 from rewriter.model.plan import Bank, BlockPlan, Shape
@@ -51,7 +52,9 @@ class _BlockEditor:
 
     def split(self) -> list[Edit]:
         """Leave what no bank takes, and put a copy for each bank after it."""
-        splitter = Splitter(self.page, self.module, self.block, self.banks, self.step)
+        definition = self.site.definition(self.plan.block.definition)
+        temporaries = Temporaries(self.page, definition, self.module, self.block, self.site.macro_words)
+        splitter = Splitter(self.page, self.block, self.banks, temporaries, self.step)
         splitter.check()
         residual = splitter.residual
         pieces: list[str] = []

@@ -25,7 +25,6 @@ class Printer:
         formulas: writes the conditions of leaves.
         target: what a leaf sets to 1.
         label: names an inner block that declares variables.
-        complete: give every case a default (`always_comb` asks for it).
         step: one step of indentation.
     """
 
@@ -34,7 +33,6 @@ class Printer:
     formulas: FormulaWriter
     target: str
     label: Callable[[Block], str]
-    complete: bool
     step: str
 
     def lines(self, statement: Statement) -> list[str]:  # noqa: PLR0911 (one return per kind)
@@ -94,7 +92,7 @@ class Printer:
                 lines += indented(merged_labels([self._label(item) for item in run], body, self.step), self.step)
             else:
                 lines += indented(self._attached(self._label(run[0]) + ":", run[0].body), self.step)
-        if self.complete and not any(item.is_default for item in statement.items):
+        if not any(item.is_default for item in statement.items):
             lines.append(f"{self.step}default: ;")
         return [head, *lines, "endcase"]
 

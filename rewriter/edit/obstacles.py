@@ -141,13 +141,12 @@ def bound_from_outside(design: Design) -> Iterator[str]:
     """Yield definitions with an instance that no text of its parent definition makes: a `bind` elsewhere."""
     at = {path: module.definition for module in design.modules for path in module.instances}
     written = {
-        name: {(i.name, i.target) for i in definition.instances if not i.is_bind}
+        name: {i.target for i in definition.instances if not i.is_bind}
         for name, definition in design.definitions.items()
     }
     for path, name in at.items():
         parent = path.rpartition(".")[0]
         while parent and parent not in at:
             parent = parent.rpartition(".")[0]
-        own = path.rpartition(".")[2].split("[", 1)[0]
-        if parent and (own, name) not in written.get(at[parent], set()):
+        if parent and name not in written.get(at[parent], set()):
             yield name

@@ -2,10 +2,12 @@
 
 from collections.abc import Mapping
 from dataclasses import dataclass, field, replace
+from functools import cached_property
 
 from rewriter.edit.formula import FormulaWriter, wrapped
 from rewriter.edit.names import CELL_FORMS, Names, is_plain, sanitised
 from rewriter.edit.skeleton import SkeletonWriter
+from rewriter.edit.temporaries import macro_words
 from rewriter.edit.text import CannotEditError, Page, copied
 from rewriter.model.cells import PORTS, WRAPPERS
 from rewriter.model.design import ClockedBlock, Definition, Design, Language, Module
@@ -39,6 +41,11 @@ class Site:
         self._pages: dict[str, Page] = {}
         for cell in sorted(self.plan.cells, key=lambda c: (c.blocks[0].span, c.id)):
             self.stems[cell.id] = self.names_of(cell.definition).reserve(cell.name, CELL_FORMS)
+
+    @cached_property
+    def macro_words(self) -> frozenset[str]:
+        """Give every word in the text of some macro."""
+        return macro_words(self.design.source.texts)
 
     def page(self, path: str) -> Page:
         """Give the text of a file."""

@@ -74,7 +74,7 @@ class SkeletonWriter:
         return inner and (outer if isinstance(inner, Always) else And((outer, inner)))
 
     def _always_comb(self) -> list[str]:
-        branches = self._branches(self.signal, complete=True)
+        branches = self._branches(self.signal)
         locals_ = self._own_names(branches, [], "_t")
         declared = [*self._hoisted(branches), *self._temporaries(branches)]
         named = f" : {self.signal}_branches" if declared else ""
@@ -83,7 +83,7 @@ class SkeletonWriter:
 
     def _function(self) -> list[str]:
         function = f"{self.signal}_f"
-        branches = self._branches(function, complete=False)
+        branches = self._branches(function)
         arguments = self._arguments(branches)
         inputs = self._own_names(branches, [a.name for a in arguments], "_i")
         declared = [*self._hoisted(branches), *self._temporaries(branches)]
@@ -100,11 +100,11 @@ class SkeletonWriter:
             return {}
         return self.names.suffixed([*passed, *self._written(branches)], suffix)
 
-    def _branches(self, target: str, *, complete: bool) -> list[str]:
+    def _branches(self, target: str) -> list[str]:
         def label(block: Block) -> str:
             return f"{self.signal}_{block.span.start - self.block.span.start}"
 
-        printer = Printer(self.page, self._leaves, self.formulas, target, label, complete, self.step)
+        printer = Printer(self.page, self._leaves, self.formulas, target, label, self.step)
         # The outermost block lends its declarations to the copy, so that its begin and end can go.
         opened = isinstance(self._tree, Block) and self._tree.span == self._synchronous.span
         parts = self._tree.children() if opened else (self._tree,)

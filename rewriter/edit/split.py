@@ -8,12 +8,12 @@ from functools import cached_property
 from rewriter.edit.cuts import Cut, applied, difference, gaps, has_directive, tidied, whole_line_comments
 from rewriter.edit.names import COPY_FORMS, Names
 from rewriter.edit.prune import Pruner, check_separate
-from rewriter.edit.skeleton import local_declaration
-from rewriter.edit.text import COMMENT, CannotEditError, Page, renamed
-from rewriter.model.design import ClockedBlock, Module
+from rewriter.edit.temporaries import Temporaries, feeds, simple
+from rewriter.edit.text import COMMENT, CannotEditError, Page, renamed, words
+from rewriter.model.design import ClockedBlock
 from rewriter.model.plan import Bank
 from rewriter.model.source import Span
-from rewriter.model.statement import Assign, Block, Case, If, Loop, Opaque, Statement, Target
+from rewriter.model.statement import Assign, Block, Case, Opaque, Statement
 
 _CONDITIONAL = re.compile(r"`(?:ifdef|ifndef|elsif|else|endif)\b")
 _GROUP_ENDS = re.compile(r"[ \t]*(?:end(?:case)?\b|else\b|//|/\*|\r?\n|\Z)")
@@ -25,15 +25,16 @@ class Splitter:
 
     Args:
         page: its file.
-        module, block: a body that holds it.
+        block: as a body holds it.
         banks: the banks that leave it.
+        temporaries: of the block.
         step: one step of indentation.
     """
 
     page: Page
-    module: Module
     block: ClockedBlock
     banks: tuple[Bank, ...]
+    temporaries: Temporaries
     step: str
 
     def check(self) -> None:
@@ -58,10 +59,11 @@ class Splitter:
         Raises:
             CannotEditError: `inactive-code`, macro text would go with what leaves.
         """
-        stays = Pruner(self._stays, self._holds, self._is_full).prune(self.block.body)
+        stays = self._rest(self._needed_here)
         if stays is None or not any(self._matters(inner) for inner in stays.walk()):
             return None
-        cuts = tidied(self.page, self.block.span, list(difference(self.page, self.block.body, stays, self.step)))
+        cuts = list(difference(self.page, self.block.body, stays, self.step))
+        cuts = tidied(self.page, self.block.span, [*cuts, *self._unused_declarations(stays, self._needed_here)])
         for start, end in self._gaps:
             lost = any(cut.start <= start and end <= cut.end for cut in cuts)
             if lost and "`" in self._uncommented(start, end):
@@ -69,8 +71,25 @@ class Splitter:
                 raise CannotEditError("inactive-code", detail, self._at(start))
         return tuple(self._with_comments(cut) for cut in cuts)
 
-    def _stays(self, statement: Statement) -> bool:
-        return not (isinstance(statement, Assign) and any(self._writes(bank, statement) for bank in self.banks))
+    @cached_property
+    def _needed_here(self) -> frozenset[str]:
+        """Give the temporaries that what stays needs, among them all that text of macros mentions."""
+        gaps_text = [self._uncommented(start, end) for start, end in self._gaps]
+        mentioned = words("\n".join(text.replace("`", " ") for text in gaps_text if "`" in text))
+        return self.temporaries.closure(self._rest, (p for p in self.temporaries.written if simple(p) in mentioned))
+
+    def _rest(self, needed: frozenset[str]) -> Statement | None:
+        """Take out what the banks write, and temporaries that nobody else can read."""
+        idle = (self.temporaries.local | self.temporaries.private) - needed
+
+        def stays(statement: Statement) -> bool:
+            if not isinstance(statement, Assign):
+                return True
+            if statement.blocking:
+                return not all(target.variable in idle for target in statement.targets)
+            return not any(self._writes(bank, statement) for bank in self.banks)
+
+        return Pruner(stays, self._holds, self._is_full).prune(self.block.body)
 
     def _matters(self, statement: Statement) -> bool:
         match statement:
@@ -112,7 +131,7 @@ class Splitter:
         """
         if self.block.clock is None:
             raise CannotEditError("clock-unclear", "the block has no clock", self.block.span)
-        needed = self._needed(bank)
+        needed = self._needed[bank.name]
         pruned = self._pruned(bank, needed)
         clock = self.block.clock.signal.span
         cuts = [
@@ -121,7 +140,7 @@ class Splitter:
             *self._unused_declarations(pruned, needed),
             *self._macros(),
         ]
-        declared = self._declared(needed)
+        declared = self.temporaries.declarations(needed - self._owned(bank))
         cuts += self._labels(pruned, list(declared.values()), stem, names, keep_labels=keep_labels)
         cuts += [comment for comment in self._comments if not self._moves(comment, cuts)]
         text = applied(self.page, self.block.span, tidied(self.page, self.block.span, cuts))
@@ -133,46 +152,31 @@ class Splitter:
         def keep(statement: Statement) -> bool:
             if not isinstance(statement, Assign):
                 return False
-            return self._writes(bank, statement) or _feeds(statement, needed)
+            return self._writes(bank, statement) or feeds(statement, needed)
 
         pruned = Pruner(keep, is_full=self._is_full).prune(self.block.body)
         if pruned is None:
             raise CannotEditError("unsplittable", "no assignment of the bank was found", self.block.span)
         return pruned
 
-    def _needed(self, bank: Bank) -> frozenset[str]:
-        """Give the temporaries whose values the bank's assignments and branches use."""
-        needed = frozenset(name for proposal in bank.proposals for name in proposal.needs)
-        while True:
-            reads = frozenset[str]().union(*(_reads(s) for s in self._pruned(bank, needed).walk()))
-            more = needed | (reads & self._blocking)
-            if more == needed:
-                return needed
-            needed = more
-
     @cached_property
-    def _blocking(self) -> frozenset[str]:
-        return frozenset(t.variable for s in self.block.body.walk() for t in _blocking_targets(s))
+    def _needed(self) -> dict[str, frozenset[str]]:
+        """Give the temporaries that each bank's assignments and branches use."""
+        return {bank.name: self._needed_by(bank) for bank in self.banks}
 
-    @cached_property
-    def _local(self) -> frozenset[str]:
-        """Give the variables that the block declares itself: they come along with their declarations."""
-        targets = (t for s in self.block.body.walk() for t in _blocking_targets(s))
-        return frozenset(target.variable for target in targets if target.is_local)
+    def _needed_by(self, bank: Bank) -> frozenset[str]:
+        known = (name for proposal in bank.proposals for name in proposal.needs)
+        return self.temporaries.closure(lambda needed: self._pruned(bank, needed), known)
 
-    def _declared(self, needed: frozenset[str]) -> dict[str, str]:
-        """Declare the module's temporaries that a copy computes for itself, by name."""
-        blocks = (s for s in self.block.body.walk() if isinstance(s, Block))
-        own = {name for block in blocks for declaration in block.declarations for name in declaration.names}
-        return {
-            path.rsplit(".", 1)[-1]: local_declaration(self.module.variables.get(path), path)
-            for path in sorted(needed - self._local)
-            if path.rsplit(".", 1)[-1] not in own
-        }
+    def _owned(self, bank: Bank) -> frozenset[str]:
+        """Give the module's own temporaries that move to a bank: nothing else reads them, and it is the first to."""
+        earlier = frozenset[str]()
+        for other in self.banks[: self.banks.index(bank)]:
+            earlier |= self._needed[other.name]
+        return self.temporaries.private - self._needed_here - earlier
 
     def _unused_declarations(self, pruned: Statement, needed: frozenset[str]) -> Iterator[Cut]:
-        loops = {n for s in pruned.walk() if isinstance(s, Loop) for n in s.outer_variables}
-        used = {path.rsplit(".", 1)[-1] for path in needed | loops}
+        used = {simple(path) for path in needed}
         for statement in pruned.walk():
             if isinstance(statement, Block):
                 for declaration in statement.declarations:
@@ -254,28 +258,3 @@ class Splitter:
 
     def _at(self, offset: int) -> Span:
         return Span(self.page.path, offset, offset)
-
-
-def _feeds(statement: Assign, needed: frozenset[str]) -> bool:
-    return statement.blocking and any(target.variable in needed for target in statement.targets)
-
-
-def _blocking_targets(statement: Statement) -> tuple[Target, ...]:
-    return statement.targets if isinstance(statement, Assign) and statement.blocking else ()
-
-
-def _reads(statement: Statement) -> frozenset[str]:
-    """Give what a statement itself reads, the statements below it left aside."""
-    match statement:
-        case If():
-            return statement.condition.reads()
-        case Case():
-            labels = (label.reads() for item in statement.items for label in item.labels)
-            return statement.selector.reads().union(*labels)
-        case Loop():
-            return statement.reads
-        case Assign():
-            indices = (index.reads() for target in statement.targets for index in target.indices)
-            return statement.rhs.reads().union(*indices)
-        case _:
-            return frozenset()

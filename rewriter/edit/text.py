@@ -1,6 +1,7 @@
 """Source text as characters that map one to one to bytes, and what may be copied from it."""
 
 import re
+from collections import Counter
 from collections.abc import Mapping
 from dataclasses import dataclass
 from functools import cached_property
@@ -120,7 +121,12 @@ def copied(text: str) -> str:
 
 def words(text: str) -> frozenset[str]:
     """Give the names in a piece of source: no comments, strings, numbers, members or macros."""
-    return frozenset(found["word"] for found in _WORDS.finditer(text) if found["word"])
+    return frozenset(word_counts(text))
+
+
+def word_counts(text: str) -> Counter[str]:
+    """Count the names in a piece of source."""
+    return Counter(found["word"] for found in _WORDS.finditer(text) if found["word"])
 
 
 def renamed(text: str, names: Mapping[str, str]) -> str:
