@@ -30,6 +30,7 @@ from pyslang.syntax import (
     SyntaxTree,
     VariablePortHeaderSyntax,
     WildcardPortConnectionSyntax,
+    WildcardPortListSyntax,
 )
 
 from rewriter.frontend.bodies import Body
@@ -66,7 +67,8 @@ class Definitions:
         self._bodies = bodies
         self._symbols = {
             s.name: s for s in elaboration.compilation.getDefinitions() if isinstance(s, DefinitionSymbol)}
-        self._trees: list[SyntaxTree] = [*elaboration.parsed.driver.syntaxTrees, *elaboration.parsed.extra_trees]
+        trees: list[SyntaxTree] = [*elaboration.parsed.driver.syntaxTrees, *elaboration.parsed.extra_trees]
+        self._trees = sorted(trees, key=lambda tree: tree.isLibraryUnit)  # a name in both is the source's
 
     def all(self) -> dict[str, Definition]:
         """Give every definition by name; the first one where a name stands twice."""
@@ -123,7 +125,8 @@ class Definitions:
         if not isinstance(ports, (AnsiPortListSyntax, NonAnsiPortListSyntax)):
             at = Span(end.file, end.start, end.start)
             return PortList(PortStyle.NONE, at, at.start, at.start, end.end, has_directives=False,
-                            first_has_direction=False, names=(), in_macro=in_macro)
+                            first_has_direction=False, names=(),
+                            in_macro=in_macro or isinstance(ports, WildcardPortListSyntax))
         span = self._locator.span(ports.sourceRange)
         items = [p for p in ports.ports if isinstance(p, SyntaxNode) and not isinstance(p, EmptyNonAnsiPortSyntax)]
         if not items:

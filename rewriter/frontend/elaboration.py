@@ -112,9 +112,9 @@ class Elaboration:
         engine.addClient(printed)
         engine.setIgnoreAllWarnings(True)
         engine.setSeverity(pyslang.Diags.UnknownModule, pyslang.DiagnosticSeverity.Ignored)
-        engine.clearCounts()
-        engine.issue(diagnostics)
-        if engine.numErrors:
+        before = engine.numErrors
+        engine.issue(diagnostics)  # (after clearCounts() it would print nothing)
+        if engine.numErrors > before:
             raise CompileError(printed.getString())
 
     def _check_tops(self) -> None:

@@ -307,7 +307,7 @@ class Statements:
         """Lower `x += y`: slang keeps a stand-in for x inside the right side."""
         left = self._expressions.lower(expression.left)
         right = self._expressions.lower(expression.right)
-        return Operation(self._locator.span(expression.sourceRange), f"({left.key}={left.key} op {right.key})",
+        return Operation(self._locator.span(expression.sourceRange), f"({left.key}:={right.key})",
                          left.width, left.signed, None, copyable=False, operator="compound", operands=(left, right))
 
     def _step(self, statement: ExpressionStatement, expression: UnaryExpression) -> Statement:
