@@ -48,7 +48,30 @@ def difference(page: Page, old: Statement, new: Statement, step: str) -> Iterato
             return
 
 
+def _promises(page: Page, old: If | Case, new: If | Case) -> Iterator[Cut]:
+    """Take off qualifiers, attributes and comments that promise something about all branches, when one went."""
+    if old.qualifier and not new.qualifier:
+        head = page.text(old.head)
+        yield Cut(old.head.start, old.head.start + len(head) - len(re.sub(r"\A\w+\s+", "", head)))
+    if isinstance(old, Case) and isinstance(new, Case) and old.items != new.items:
+        if old.attributes and not new.attributes:
+            yield from _without_promise(page, old.attributes)
+        after = page.data[old.head.end : page.line_end(old.head.end)]
+        if found := re.search(r"[ \t]*(?://|/\*).*\b(?:full|parallel)_case\b.*", after):
+            yield Cut(old.head.end + found.start(), old.head.end + found.end())
+
+
+def _without_promise(page: Page, attributes: Span) -> Iterator[Cut]:
+    text = page.text(attributes)
+    others = re.sub(r"\b(?:full|parallel)_case\b(?:\s*=\s*[\w']+)?\s*,?", "", text)
+    if re.fullmatch(r"(?:\(\*[\s,]*\*\)\s*)+", others):
+        yield _gone(attributes)
+    elif others != text:
+        yield Cut(attributes.start, attributes.end, re.sub(r",\s*\*\)", " *)", others))
+
+
 def _if_difference(page: Page, old: If, new: If, step: str) -> Iterator[Cut]:
+    yield from _promises(page, old, new)
     yield from _branch(page, old.head.end, old.then, new.then, step)
     if old.other is None or old.else_keyword is None:
         return
@@ -71,6 +94,7 @@ def _case_difference(page: Page, old: Case, new: Case, step: str) -> Iterator[Cu
         # Read as a promise about arms, the attribute makes an engine drop an arm that does nothing (measured
         # with Yosys 0.70: the default arm then takes its place). Without it the arms mean what IEEE 1800 says.
         yield _gone(old.attributes)
+    yield from _promises(page, old, new)
     before = {item.span: item for item in old.items}
     kept = {item.span for item in new.items}
     for item in old.items:

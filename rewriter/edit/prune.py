@@ -15,12 +15,13 @@ class Pruner:
     Args:
         keep: for statements without branches (assignments, tasks).
         holds: blocks that must stay though nothing in them is kept (text of macros and directives).
-        is_full: case statements whose items must all stay, since a tool may take them to be complete.
+
+    Where a branch becomes empty, `unique`, `full_case` and the like go: the promise was made for all branches, and
+    Yosys 0.70 drops empty items under `parallel_case`, so that their cases fall into the default.
     """
 
     keep: Callable[[Statement], bool]
     holds: Callable[[Block], bool] = lambda _: False
-    is_full: Callable[[Case], bool] = lambda _: False
 
     def prune(self, statement: Statement, *, else_follows: bool = False) -> Statement | None:
         """Give the statement without what is not kept; None when nothing is.
@@ -56,15 +57,29 @@ class Pruner:
             return None
         if guard and statement.other:
             other = Empty(statement.other.span)
-        return replace(statement, then=then or Empty(statement.then.span), other=other)
+        kept = replace(statement, then=then or Empty(statement.then.span), other=other)
+        return replace(kept, qualifier="") if _lost_branch(statement, kept) else kept
 
     def _case(self, statement: Case) -> Case | None:
         items = tuple(replace(item, body=self.prune(item.body) or Empty(item.body.span)) for item in statement.items)
         if all(isinstance(item.body, Empty) for item in items):
             return None
-        if statement.qualifier or self.is_full(statement):
+        needed = tuple(_needed_items(statement, items))
+        whole = all(
+            isinstance(item.body, Empty) == isinstance(old.body, Empty)
+            for item, old in zip(items, statement.items, strict=True)
+        )
+        if whole and len(needed) == len(items):
             return replace(statement, items=items)
-        return replace(statement, items=tuple(_needed_items(statement, items)))
+        return replace(statement, items=needed, qualifier="", attributes=None, attribute_names=())
+
+
+def _lost_branch(old: Statement, new: Statement | None) -> bool:
+    """Say whether an `if` chain has a branch that became empty or went."""
+    if not isinstance(old, If) or not isinstance(new, If):
+        return not isinstance(old, Empty) and (new is None or isinstance(new, Empty))
+    emptied = isinstance(new.then, Empty) and not isinstance(old.then, Empty)
+    return emptied or (old.other is not None and _lost_branch(old.other, new.other))
 
 
 def _needed_items(case: Case, items: tuple[CaseItem, ...]) -> Iterator[CaseItem]:

@@ -122,7 +122,7 @@ class SkeletonWriter:
         body = self._synchronous
         if overlap := check_separate(body):
             raise CannotEditError("inside-macro", "one macro makes several statements", overlap)
-        pruned = Pruner(lambda s: s.span in self._leaves or self._feeds(s)).prune(_plain(body))
+        pruned = Pruner(lambda s: s.span in self._leaves or self._feeds(s)).prune(body)
         if pruned is None:
             raise CannotEditError("not-copyable", "no branch of the block is left", self.block.span)
         return self._shortened(pruned)
@@ -225,23 +225,6 @@ def local_declaration(variable: Variable | None, path: str) -> str:
     if not kind or kind.startswith(("[", "signed", "unsigned")):
         kind = f"reg {kind}".rstrip()
     return f"{kind} {name}{' ' if variable.unpacked else ''}{variable.unpacked};"
-
-
-def _plain(statement: Statement) -> Statement:
-    """Drop qualifiers, so that the pruner may drop items: the copy makes no promise that the original made."""
-    match statement:
-        case Block():
-            return replace(statement, body=tuple(_plain(inner) for inner in statement.body))
-        case If():
-            other = _plain(statement.other) if statement.other else None
-            return replace(statement, qualifier="", then=_plain(statement.then), other=other)
-        case Case():
-            items = tuple(replace(item, body=_plain(item.body)) for item in statement.items)
-            return replace(statement, qualifier="", items=items)
-        case Loop():
-            return replace(statement, body=_plain(statement.body))
-        case _:
-            return statement
 
 
 def _simple(path: str) -> str:

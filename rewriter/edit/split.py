@@ -13,7 +13,7 @@ from rewriter.edit.text import COMMENT, CannotEditError, Page, renamed, words
 from rewriter.model.design import ClockedBlock
 from rewriter.model.plan import Bank
 from rewriter.model.source import Span
-from rewriter.model.statement import Assign, Block, Case, Opaque, Statement
+from rewriter.model.statement import Assign, Block, Opaque, Statement
 
 _CONDITIONAL = re.compile(r"`(?:ifdef|ifndef|elsif|else|endif)\b")
 _GROUP_ENDS = re.compile(r"[ \t]*(?:end(?:case)?\b|else\b|//|/\*|\r?\n|\Z)")
@@ -89,7 +89,7 @@ class Splitter:
                 return not all(target.variable in idle for target in statement.targets)
             return not any(self._writes(bank, statement) for bank in self.banks)
 
-        return Pruner(stays, self._holds, self._is_full).prune(self.block.body)
+        return Pruner(stays, self._holds).prune(self.block.body)
 
     def _matters(self, statement: Statement) -> bool:
         match statement:
@@ -154,7 +154,7 @@ class Splitter:
                 return False
             return self._writes(bank, statement) or feeds(statement, needed)
 
-        pruned = Pruner(keep, is_full=self._is_full).prune(self.block.body)
+        pruned = Pruner(keep).prune(self.block.body)
         if pruned is None:
             raise CannotEditError("unsplittable", "no assignment of the bank was found", self.block.span)
         return pruned
@@ -231,11 +231,6 @@ class Splitter:
 
     def _writes(self, bank: Bank, statement: Assign) -> bool:
         return any(statement.span in proposal.writes for proposal in bank.proposals)
-
-    def _is_full(self, case: Case) -> bool:
-        """Say whether a tool may take the case to be complete, by attribute or by a comment on its first line."""
-        line = self.page.data[case.head.end : self.page.line_end(case.head.end)]
-        return "full_case" in case.attribute_names or "full_case" in line
 
     def _holds(self, block: Block) -> bool:
         """Say whether text of macros or directives stands right inside a block."""
