@@ -6,10 +6,9 @@ The cells print their pulses in a simulation built with `STILLCLOCK_COUNT`; a bi
 import re
 from collections.abc import Iterable, Mapping
 from dataclasses import dataclass
-from typing import Any
 
 from tests.cores.fragments import blank_comments
-from tests.cores.rewriting import instance
+from tests.cores.rewriting import GatedBank
 
 COUNT = "STILLCLOCK_COUNT"
 _PULSES = re.compile(r"^stillclock-count (\S+) (\d+)$", re.MULTILINE)
@@ -63,12 +62,12 @@ class EdgeCount:
         return sum(cell.bits * cell.pulses for cell in self.cells) / (bits * self.cycles)
 
 
-def count_edges(log: str, banks: Iterable[dict[str, Any]], text: str, bits: int) -> EdgeCount:
+def count_edges(log: str, banks: Iterable[GatedBank], text: str, bits: int) -> EdgeCount:
     """Weigh the pulses of a simulation.
 
     Args:
         log: what it printed.
-        banks: the gated banks of the report (`module`, `cell`, and the bits of each occurrence).
+        banks: the gated banks of the report of the report.
         text: the rewritten RTL, which says which module an instance is of.
         bits: register bits of the whole design.
     """
@@ -93,14 +92,12 @@ def instance_modules(text: str, modules: Iterable[str]) -> dict[str, str]:
     return found
 
 
-def _loads(banks: Iterable[dict[str, Any]]) -> dict[tuple[str, str], int]:
+def _loads(banks: Iterable[GatedBank]) -> dict[tuple[str, str], int]:
     """Add up the bits behind each cell: several banks may share one."""
     loads: dict[tuple[str, str], int] = {}
     for bank in banks:
-        key = (str(bank["module"]), instance(bank))
-        widths = {int(occurrence["bits"]) for occurrence in bank["occurrences"]}
-        assert len(widths) == 1, f"{bank['name']} has occurrences of several widths: {widths}"
-        loads[key] = loads.get(key, 0) + widths.pop()
+        key = (bank.module, bank.instance)
+        loads[key] = loads.get(key, 0) + bank.bits
     return loads
 
 

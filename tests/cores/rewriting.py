@@ -14,6 +14,23 @@ TEST_PORT = "test_en"  # the default of --test-port
 
 
 @dataclass(frozen=True)
+class GatedBank:
+    """What the report says of a bank with a cell; `bits` are those of one occurrence."""
+
+    name: str
+    module: str
+    instance: str
+    registers: tuple[str, ...]
+    bits: int
+    evidence: str
+
+    @property
+    def place(self) -> str:
+        """Name its cell in the text, `module.instance`."""
+        return f"{self.module}.{self.instance}"
+
+
+@dataclass(frozen=True)
 class Rewritten:
     """One finished rewrite.
 
@@ -41,21 +58,22 @@ class Rewritten:
     @cached_property
     def rtl(self) -> Rtl:
         """What a bench compiles; without any cell there is no test port either."""
-        return Rtl(self.changed, _files(self.folder / "cell"), TEST_PORT if self.gated else None)
+        return Rtl(self.changed, _files(self.folder / "cell"), TEST_PORT if self.banks else None)
+
+    @cached_property
+    def banks(self) -> tuple[GatedBank, ...]:
+        """The banks that got a cell."""
+        names = {cell["id"]: f"u_icg_{cell['name']}" for cell in self.report["cells"]}
+        gated = [bank for bank in self.report["banks"] if bank["verdict"] == "gated"]
+        return tuple(_bank(bank, names[bank["cell"]]) for bank in gated)
 
     @cached_property
     def registers(self) -> dict[str, tuple[str, ...]]:
         """The registers behind each cell, by `module.instance`."""
         found: dict[str, tuple[str, ...]] = {}
-        for bank in self.gated:
-            cell = f"{bank['module']}.{instance(bank)}"
-            found[cell] = (*found.get(cell, ()), *(str(register) for register in bank["registers"]))
+        for bank in self.banks:
+            found[bank.place] = (*found.get(bank.place, ()), *bank.registers)
         return found
-
-    @property
-    def gated(self) -> tuple[dict[str, Any], ...]:
-        """The banks that got a cell."""
-        return tuple(bank for bank in self.report["banks"] if bank["verdict"] == "gated")
 
 
 def rewrite(name: str, out: Path, *options: str) -> Rewritten:
@@ -74,9 +92,12 @@ def _files(folder: Path) -> tuple[Path, ...]:
     return tuple(sorted(path for path in folder.rglob("*") if path.is_file()))
 
 
-def instance(bank: dict[str, Any]) -> str:
-    """Give the name of a gated bank's cell in the text; its id ends with the name it was given."""
-    return f"u_icg_{bank['cell'].rpartition(':')[2]}"
+def _bank(bank: dict[str, Any], instance: str) -> GatedBank:
+    widths = {int(occurrence["bits"]) for occurrence in bank["occurrences"]}
+    assert len(widths) == 1, f"{bank['name']} has occurrences of several widths: {widths}"
+    return GatedBank(
+        bank["name"], bank["module"], instance, tuple(bank["registers"]), widths.pop(), bank["evidence"]["kind"]
+    )
 
 
 def _original(design: Core, path: Path) -> Path:

@@ -9,6 +9,7 @@ from tests.cores.conditions import alternatives, conjunctions
 from tests.cores.edges import CellCount, EdgeCount, count_edges, instance_modules
 from tests.cores.faults import KINDS, Effect, Fault, all_faults, plant
 from tests.cores.fragments import find_cells, sees
+from tests.cores.rewriting import GatedBank
 from tests.cores.running import run
 
 TEXT = """\
@@ -178,5 +179,5 @@ def test_planting_touches_nothing_else() -> None:
     assert re.sub(r"\.wake\(!", ".wake(", fault.plant(TEXT)) == TEXT
 
 
-def _bank(name: str, bits: int) -> dict[str, object]:
-    return {"name": name, "module": "quay", "cell": f"quay:{name}", "occurrences": [{"bits": bits}]}
+def _bank(name: str, bits: int) -> GatedBank:
+    return GatedBank(name, "quay", f"u_icg_{name}", (name,), bits, "proved")
