@@ -13,7 +13,7 @@ from rewriter.model.errors import StillclockError
 
 
 class ReaderGoneError(Exception):
-    """Report that nobody reads the results any more (`… | head`). A broken pipe itself, click would take for a failure."""
+    """Report that nobody reads the results any more (`… | head`); click would take a broken pipe for a failure."""
 
 
 def result(text: str) -> None:

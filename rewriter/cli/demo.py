@@ -60,13 +60,13 @@ def _step(name: str, *arguments: str) -> None:
 
 
 def _what_to_look_at(sources: Path, result: Path) -> str:
-    return f"""
-What to look at
-  {result}/changes.diff   the change: every line of it belongs to gating
-  {result}/report.json    every register with its verdict, reason and evidence
-  {result}/cell           the wrapper of the gating cell; without a cell map it stops a synthesis run
-  {sources}               the original, unchanged
-Next
-  stillclock explain too-few-bits
-  stillclock rewrite -F {sources / LIST} --cell-map sky130hd --diff
-"""
+    looks = {
+        result / "changes.diff": "the change: every line of it belongs to gating",
+        result / "report.json": "every register with its verdict, reason and evidence",
+        result / "cell": "the wrapper of the gating cell; without a cell map it stops a synthesis run",
+        sources: "the original, unchanged",
+    }
+    width = max(len(str(path)) for path in looks)
+    lines = [f"  {path!s:<{width}}  {what}" for path, what in looks.items()]
+    following = ["stillclock explain async-load", f"stillclock rewrite -F {sources / LIST} --cell-map sky130hd --diff"]
+    return "\n".join(("", "What to look at", *lines, "What to try next", *(f"  {command}" for command in following)))

@@ -57,9 +57,10 @@ def _blocks(run: Run, mismatch: Mismatch) -> Iterator[BlockId]:
     definitions = {module.definition for module in run.design.modules if mismatch.module in module.instances}
     variable = _INDEX.sub("", mismatch.what)
     for plan in run.plan.blocks:
-        if plan.block.definition in definitions and plan.banks:
-            if any(_INDEX.sub("", part.variable) == variable for register in plan.rest for part in register.parts):
-                yield plan.block
+        parts = (part for register in plan.rest for part in register.parts)
+        inside = plan.block.definition in definitions and bool(plan.banks)
+        if inside and any(_INDEX.sub("", part.variable) == variable for part in parts):
+            yield plan.block
 
 
 def _objection(run: Run, bank: Bank, *, allow_unproved: bool) -> Reason | None:

@@ -25,7 +25,7 @@ def shell(capfd: pytest.CaptureFixture[str], tmp_path: Path, monkeypatch: pytest
 def prover(monkeypatch: pytest.MonkeyPatch) -> Callable[..., list[ProofJob]]:
     """Put a prover in place whose answers the test chooses: the flow is tested, not the engine."""
 
-    def install(answers: dict[str, EvidenceKind], **changes: object) -> list[ProofJob]:
+    def install(answers: dict[str, EvidenceKind], if_gated: str = "", **changes: object) -> list[ProofJob]:
         jobs: list[ProofJob] = []
 
         def prove(job: ProofJob, progress: Callable[[str], None]) -> ProofResult:
@@ -38,7 +38,7 @@ def prover(monkeypatch: pytest.MonkeyPatch) -> Callable[..., list[ProofJob]]:
                 if f"u_icg_{name} " in text
             )
             result = ProofResult(cells, (), (), {}, (), (), {}, len(cells), 8 * len(cells))
-            return replace(result, **changes)  # type: ignore[arg-type]
+            return replace(result, **changes) if f"u_icg_{if_gated}" in text else result  # type: ignore[arg-type]
 
         monkeypatch.setattr(loop, "prove", prove)
         return jobs

@@ -183,7 +183,7 @@ def test_bad_proof(shell: Shell, tmp_path: Path, name: str) -> None:
 
 
 @pytest.mark.parametrize(
-    ("arguments", "message"),
+    "arguments, message",
     [
         ((), "Usage: stillclock"),
         (("rewriet",), "error: No such command 'rewriet'"),

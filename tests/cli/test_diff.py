@@ -47,7 +47,7 @@ def test_reads_like_a_diff() -> None:
 
 
 @pytest.mark.parametrize(
-    ("old", "edits"),
+    "old, edits",
     [
         (b"a\r\nb\r\nc\r\n", ((3, 4, b"B"),)),
         (b"a\nb", ((3, 3, b"c"),)),

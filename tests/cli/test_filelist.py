@@ -2,6 +2,7 @@
 
 import shutil
 from pathlib import Path
+from typing import Any, cast
 
 import pytest
 from pyslang.driver import CommandLineOptions, Driver
@@ -23,8 +24,8 @@ def slang_reads(file: Path) -> list[str]:
     assert driver.parseAllSources()
     compilation = driver.createCompilation()
     assert not [str(found.code) for found in compilation.getAllDiagnostics()]
-    top = compilation.getRoot().topInstances[0]
-    return [top.name, *(str(item.value) for item in top.body.parameters)]  # type: ignore[attr-defined]
+    top = cast("Any", compilation.getRoot().topInstances)[0]
+    return [str(top.name), *(str(item.value) for item in top.body.parameters)]
 
 
 @pytest.fixture

@@ -19,6 +19,10 @@ from rewriter.report.inplace import replace_files
 REPORT = json.dumps({"schema": SCHEMA}).encode()
 
 
+def never(*_: object) -> bool:
+    return False
+
+
 def fine(built: Path) -> None:
     assert (built / "report.json").is_file()
 
@@ -36,7 +40,7 @@ def test_written_and_replaced_as_a_whole(tmp_path: Path) -> None:
 
 
 def test_replaced_where_folders_cannot_be_swapped(tmp_path: Path, monkeypatch: pytest.MonkeyPatch) -> None:
-    monkeypatch.setattr(folder, "_exchange", lambda *_: False)
+    monkeypatch.setattr(folder, "_exchange", never)
     place = tmp_path / "out"
     folder.write(place, {"report.json": REPORT, "old": b""}, fine)
     folder.write(place, {"report.json": REPORT, "new": b""}, fine)
@@ -78,11 +82,11 @@ def test_a_killed_run_leaves_the_former_folder(tmp_path: Path, number: signal.Si
         assert child.wait(10) != 0
     assert tree(place) == {"report.json": REPORT, "old": b"1"}
     if number != signal.SIGKILL:  # nothing can clean up after that
-        assert os.listdir(tmp_path) == ["out"]
+        assert [path.name for path in tmp_path.iterdir()] == ["out"]
 
 
 @pytest.mark.parametrize(
-    ("files", "message"),
+    "files, message",
     [
         ({"x": b""}, "exists, and is not an output folder of stillclock"),
         ({"report.json": b"{}"}, "is not an output folder"),
@@ -112,7 +116,7 @@ def test_a_file_in_the_way(tmp_path: Path) -> None:
 
 def test_no_permission(tmp_path: Path, monkeypatch: pytest.MonkeyPatch) -> None:
     # The tests may run as root, whom the system refuses nothing.
-    monkeypatch.setattr(os, "access", lambda *_: False)
+    monkeypatch.setattr(os, "access", never)
     with pytest.raises(UserError, match="no permission to write in"):
         folder.guard(tmp_path / "out")
 

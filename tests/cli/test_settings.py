@@ -48,7 +48,7 @@ def test_a_cell_map_is_found_beside_the_settings(tmp_path: Path) -> None:
 
 
 @pytest.mark.parametrize(
-    ("text", "message"),
+    "text, message",
     [
         (
             "min-bit = 8\n",
