@@ -24,7 +24,7 @@ def slang_reads(file: Path) -> list[str]:
     assert driver.parseAllSources()
     compilation = driver.createCompilation()
     assert not [str(found.code) for found in compilation.getAllDiagnostics()]
-    top = cast("Any", compilation.getRoot().topInstances)[0]
+    top = cast("Any", compilation.getRoot()).topInstances[0]
     return [str(top.name), *(str(item.value) for item in top.body.parameters)]
 
 
