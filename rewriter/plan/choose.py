@@ -48,7 +48,7 @@ def choose(settled: Settled, policy: Policy, excluded: Mapping[RegisterId, Reaso
         A plan in which every register is in exactly one bank, or in `refusals`.
     """
     candidates, refusals = _worthwhile(settled, policy, excluded)
-    sites = _united(_by_site(candidates), settled, policy, candidates)
+    sites = _united(_by_site(candidates), settled, policy)
     cells: list[Cell] = []
     banks: list[Bank] = []
     for wake, proposals in sites:
@@ -99,30 +99,28 @@ def _by_site(proposals: Iterable[Proposal]) -> list[tuple[WakeCondition, list[Pr
 
 
 def _united(
-    sites: list[tuple[WakeCondition, list[Proposal]]], settled: Settled, policy: Policy, candidates: list[Proposal]
+    sites: list[tuple[WakeCondition, list[Proposal]]], settled: Settled, policy: Policy
 ) -> list[tuple[WakeCondition, list[Proposal]]]:
-    """Let a block whose registers are each too few share one cell that wakes on the union.
+    """Let registers that are each too few share one cell that wakes on the union of their conditions.
 
-    Only where the whole block holds: its text then stays as it is.
+    Only where nothing but such registers would stay in the block: its clock then goes for good.
     """
-    ready = {p.register for p in candidates}
-    whole = {
-        block
-        for block, registers in _registers_by_block(settled).items()
-        if block not in settled.anchored and all(r in ready for r in registers)
-    }
+    staying = {block: set(registers) for block, registers in _registers_by_block(settled).items()}
     small: dict[BlockId, list[tuple[WakeCondition, list[Proposal]]]] = {}
     kept: list[tuple[WakeCondition, list[Proposal]]] = []
     for wake, proposals in sites:
         blocks = {p.register.block for p in proposals}
         few = sum(p.bits for p in proposals) < policy.min_bits
-        if few and len(blocks) == 1 and blocks <= whole and not isinstance(wake.form, Skeleton):
+        if few and len(blocks) == 1 and not isinstance(wake.form, Skeleton):
             small.setdefault(blocks.pop(), []).append((wake, proposals))
-        else:
-            kept.append((wake, proposals))
+            continue
+        kept.append((wake, proposals))
+        if not few:
+            for p in proposals:
+                staying[p.register.block].discard(p.register)
     for block, group in small.items():
         members = [p for _, proposals in group for p in proposals]
-        complete = {p.register for p in members} == set(_registers_by_block(settled)[block])
+        complete = block not in settled.anchored and {p.register for p in members} == staying[block]
         if complete and len(group) > 1 and sum(p.bits for p in members) >= policy.min_bits:
             kept.append((_union([wake for wake, _ in group]), members))
         else:
