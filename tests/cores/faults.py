@@ -205,7 +205,7 @@ def all_faults(text: str, registers: Mapping[str, Sequence[str]]) -> tuple[Fault
         registers: by cell (`module.instance`), the registers behind it, for `Fault.registers`.
     """
     cells = find_cells(text)
-    sites = [_Site(text, cell, tuple(other for other in cells if sees(text, cell, other))) for cell in cells]
+    sites = [_Site(text, cell, tuple(other for other in cells if _confusable(text, cell, other))) for cell in cells]
     return tuple(fault for kind in KINDS for site in sites for fault in _faults(kind, site, registers))
 
 
@@ -242,6 +242,12 @@ def _faults(kind: str, site: _Site, registers: Mapping[str, Sequence[str]]) -> I
             changes,
             changes[0].span.of(site.text),
         )
+
+
+def _confusable(text: str, cell: PlacedCell, other: PlacedCell) -> bool:
+    """Say whether the other cell's nets can be reached, and are driven by another condition."""
+    same = cell.condition and other.condition and cell.condition.of(text).split() == other.condition.of(text).split()
+    return not same and sees(text, cell, other)
 
 
 def _plain(site: _Site) -> bool:

@@ -11,12 +11,13 @@ from dataclasses import asdict, dataclass, replace
 from pathlib import Path
 
 from tests.cores.faults import KINDS, Effect, Fault, plant
+from tests.cores.proving import Proof, Prover
 from tests.cores.rewriting import Rewritten, rewrite
 from tests.cores.running import BenchRun, Rtl
 from tests.cores.testbenches import Bench, set_up
 
 HANG = 15.0  # seconds; without a fault every simulation ends within two
-Prover = Callable[[Fault, Rtl], bool]
+Asker = Callable[[Fault, str], Proof]
 
 
 @dataclass(frozen=True)
@@ -26,7 +27,7 @@ class Outcome:
     Attributes:
         bench: the testbench that killed it; None when all passed.
         how: `wrong` or `hung`; empty when it survived.
-        proved: whether the proof killed it; None when it was not asked.
+        proof: what the proof said; None when it was not asked.
         seconds: time of the testbenches.
     """
 
@@ -37,7 +38,7 @@ class Outcome:
     after: str
     bench: str | None
     how: str
-    proved: bool | None
+    proof: Proof | None
     seconds: float
 
 
@@ -73,9 +74,10 @@ def check_baseline(place: Workplace) -> None:
         assert run.passed, f"without a fault: {run.tail}"
 
 
-def try_fault(place: Workplace, fault: Fault, prover: Prover | None = None) -> Outcome:
+def try_fault(place: Workplace, fault: Fault, prover: Asker | None = None) -> Outcome:
     """Run the benches on one fault, quickest first, until one kills it; ask the prover in any case."""
-    rtl = place.with_text(fault.plant(place.text))
+    text = fault.plant(place.text)
+    rtl = place.with_text(text)
     seconds = 0.0
     killer: BenchRun | None = None
     for bench in place.benches:
@@ -93,12 +95,12 @@ def try_fault(place: Workplace, fault: Fault, prover: Prover | None = None) -> O
         after=fault.changes[0].text,
         bench=killer.bench if killer else None,
         how="" if killer is None else "hung" if killer.hung else "wrong",
-        proved=None if prover is None else prover(fault, rtl),
+        proof=None if prover is None else prover(fault, text),
         seconds=round(seconds, 1),
     )
 
 
-def kill_rate(place: Workplace, faults: Sequence[Fault], prover: Prover | None = None) -> tuple[Outcome, ...]:
+def kill_rate(place: Workplace, faults: Sequence[Fault], prover: Asker | None = None) -> tuple[Outcome, ...]:
     """Try every fault, after the benches passed without one."""
     check_baseline(place)
     return tuple(try_fault(place, fault, prover) for fault in faults)
@@ -107,8 +109,8 @@ def kill_rate(place: Workplace, faults: Sequence[Fault], prover: Prover | None =
 def table(outcomes: Sequence[Outcome]) -> str:
     """Give the outcomes by kind, as Markdown."""
     rows = [
-        "| fault | what it can break | planted | killed by the testbench | killed by the proof |",
-        "| --- | --- | ---: | ---: | ---: |",
+        "| fault | what it can break | planted | killed by the testbench | by the proof | right place named |",
+        "| --- | --- | ---: | ---: | ---: | ---: |",
     ]
     for kind, (effect, _) in KINDS.items():
         chosen = [outcome for outcome in outcomes if outcome.kind == kind]
@@ -119,10 +121,11 @@ def table(outcomes: Sequence[Outcome]) -> str:
 
 
 def _row(name: str, effect: str, outcomes: Sequence[Outcome]) -> str:
-    asked = [outcome for outcome in outcomes if outcome.proved is not None]
-    proof = str(sum(1 for outcome in asked if outcome.proved)) if asked else "not asked"
+    answers = [outcome.proof for outcome in outcomes if outcome.proof is not None]
     killed = sum(1 for outcome in outcomes if outcome.bench)
-    return f"| {name} | {effect} | {len(outcomes)} | {killed} | {proof} |"
+    proof = str(sum(1 for answer in answers if answer.killed)) if answers else "not asked"
+    named = str(sum(1 for answer in answers if answer.named)) if answers else "not asked"
+    return f"| {name} | {effect} | {len(outcomes)} | {killed} | {proof} | {named} |"
 
 
 def as_json(core: str, seed: int, outcomes: Sequence[Outcome]) -> str:
@@ -140,7 +143,8 @@ def main(arguments: Sequence[str] | None = None) -> int:
     asked = parser.parse_args(arguments)
     rewritten = rewrite(asked.core, asked.out / "rewritten")
     place = workplace(rewritten, set_up(asked.out).of(asked.core, HANG), asked.out / "faulty")
-    outcomes = kill_rate(place, plant(place.text, rewritten.registers, count=asked.count, seed=asked.seed))
+    faults = plant(place.text, rewritten.registers, count=asked.count, seed=asked.seed)
+    outcomes = kill_rate(place, faults, Prover(rewritten, asked.out))
     (asked.out / "outcomes.json").write_text(as_json(asked.core, asked.seed, outcomes), encoding="utf-8")
     (asked.out / "table.md").write_text(table(outcomes), encoding="utf-8")
     sys.stdout.write(table(outcomes))

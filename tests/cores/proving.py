@@ -1,0 +1,77 @@
+"""Ask the proof about a fault: does it disprove the rewrite, and does it name the right register?"""
+
+import json
+import shutil
+from collections.abc import Iterator, Mapping
+from dataclasses import dataclass
+from pathlib import Path
+from typing import Any
+
+from tests.cores.faults import Fault
+from tests.cores.rewriting import Rewritten, stillclock
+
+
+@dataclass(frozen=True)
+class Proof:
+    """What the proof said of a fault.
+
+    Attributes:
+        killed: it found a difference, or a cycle in which a cell runs though nothing is written.
+        named: the difference it reports is at the faulty cell or one of its registers.
+    """
+
+    killed: bool
+    named: bool
+
+
+@dataclass(frozen=True)
+class Prover:
+    """Prove a rewrite whose changed file is replaced by a faulty one."""
+
+    rewritten: Rewritten
+    scratch: Path
+
+    def __call__(self, fault: Fault, text: str) -> Proof:
+        """Run `prove` on a copy of the output folder with the faulty text in it."""
+        folder = self.scratch / "proved"
+        shutil.rmtree(folder, ignore_errors=True)
+        shutil.copytree(self.rewritten.folder, folder)
+        ((_, changed),) = self.rewritten.changed
+        (folder / changed.relative_to(self.rewritten.folder)).write_text(text, encoding="utf-8")
+        ran = stillclock("prove", str(folder), "--format", "json")
+        assert ran.status in {0, 1}, f"{fault.id}: the proof gave no answer\n{ran.output[-2000:]}"
+        return judge(fault, json.loads(ran.output[ran.output.index("{") :]))
+
+
+def judge(fault: Fault, answer: Mapping[str, Any]) -> Proof:
+    """Read what the proof said: a difference, or a cell that wakes in cycles in which nothing is written."""
+    disproved = [cell for cell in answer["cells"] if cell["kind"] == "disproved"]
+    wider = [cell for cell in answer["cells"] if cell["wider"]]
+    named = any(name in _accepted(fault) for name in _named(disproved, answer["mismatches"]))
+    return Proof(
+        killed=bool(disproved or wider or answer["mismatches"]),
+        named=named or any(_is_cell(fault, cell) for cell in wider),
+    )
+
+
+def _is_cell(fault: Fault, cell: Mapping[str, Any]) -> bool:
+    return fault.bank == f"{cell['definition']}.{str(cell['cell']).rpartition('.')[2]}"
+
+
+def _accepted(fault: Fault) -> set[str]:
+    """Give the names that point at the fault: the cell's, and those of its registers."""
+    instance = fault.bank.rpartition(".")[2]
+    return {instance, *(_variable(register) for register in fault.registers)}
+
+
+def _named(cells: list[dict[str, Any]], mismatches: list[dict[str, Any]]) -> Iterator[str]:
+    for cell in cells:
+        yield str(cell["cell"]).rpartition(".")[2]
+        yield from (_variable(register) for register in cell["failing"])
+    for mismatch in mismatches:
+        yield from (_variable(word.strip(",:()")) for word in f"{mismatch['what']} {mismatch['detail']}".split())
+
+
+def _variable(name: str) -> str:
+    """Give the variable's own name, without scope and bits."""
+    return name.partition("[")[0].rpartition(".")[2]
