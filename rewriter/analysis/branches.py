@@ -10,19 +10,14 @@ Wanted = Callable[[Assign], bool]
 
 def around(body: Statement, wanted: Wanted) -> tuple[Statement, ...]:
     """Give the wanted assignments and every statement above them, outermost first."""
-    kept: list[Statement] = []
-
-    def visit(statement: Statement) -> bool:
-        place = len(kept)
-        kept.append(statement)
-        inside = [visit(child) for child in statement.children()]
-        if any(inside) or (isinstance(statement, Assign) and wanted(statement)):
-            return True
-        del kept[place:]
-        return False
-
-    visit(body)
-    return tuple(kept)
+    kept: set[int] = set()
+    for start, (statement, _) in enumerate(body.family):
+        if isinstance(statement, Assign) and wanted(statement):
+            place = start
+            while place >= 0 and place not in kept:
+                kept.add(place)
+                place = body.family[place][1]
+    return tuple(body.family[place][0] for place in sorted(kept))
 
 
 def conditions(statements: tuple[Statement, ...]) -> Iterator[Expr]:

@@ -27,7 +27,7 @@ def find(block: ClockedBlock, module: Module) -> Temporaries:
     loop_variables = loop_names(block.body)
     targets = [
         target
-        for statement in block.body.walk()
+        for statement, _ in block.body.family
         if isinstance(statement, Assign) and statement.blocking
         for target in statement.targets
         if target.variable not in loop_variables
@@ -43,7 +43,7 @@ def loop_names(statement: Statement) -> frozenset[str]:
     """Give every loop variable of the statement, wherever it is declared."""
     return frozenset(
         name
-        for inner in statement.walk()
+        for inner, _ in statement.family
         if isinstance(inner, Loop)
         for name in (*inner.variables, *inner.outer_variables)
     )

@@ -61,6 +61,8 @@ class _Reader:
         self.temporaries = temporaries
         self.source = source
         self.loops = loop_names(block.body)
+        # Only these statements matter to the group; big blocks hold few of them.
+        self.mine = frozenset(id(s) for s in branches.around(block.body, group.writes))
         self.gate = block.clock.condition if block.clock else None  # `iff`
 
     def condition(self) -> WakeCondition:
@@ -81,9 +83,11 @@ class _Reader:
 
     def formula(self, statement: Statement) -> Formula:
         """Read the condition off `if` trees; anything else asks for a skeleton."""
+        if id(statement) not in self.mine:
+            return f.NEVER
         match statement:
             case Assign():
-                return self.written(statement) if self.group.writes(statement) else f.NEVER
+                return self.written(statement)
             case Block():
                 return f.either(*(self.formula(inner) for inner in statement.body))
             case If():
@@ -140,7 +144,11 @@ class _Reader:
 
     def wakes(self, statement: Statement) -> bool:
         """Say whether some assignment below wakes the group."""
-        return any(isinstance(s, Assign) and self.is_leaf(s) for s in statement.walk())
+        if id(statement) not in self.mine:
+            return False
+        if isinstance(statement, Assign):
+            return self.is_leaf(statement)
+        return any(self.wakes(child) for child in statement.children())
 
     def is_leaf(self, statement: Assign) -> bool:
         """Say whether this assignment wakes the group."""
@@ -245,9 +253,11 @@ class _Reader:
 
     def liveness(self, statement: Statement) -> Liveness:
         """Say how often the group is written, as far as constants of this body tell."""
+        if id(statement) not in self.mine:
+            return Liveness.NEVER
         match statement:
             case Assign():
-                return f.liveness(self.written(statement)) if self.group.writes(statement) else Liveness.NEVER
+                return f.liveness(self.written(statement))
             case Block():
                 return _in_sequence(self.liveness(inner) for inner in statement.body)
             case If():

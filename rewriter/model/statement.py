@@ -3,6 +3,7 @@
 from collections.abc import Iterator
 from dataclasses import dataclass
 from enum import Enum
+from functools import cached_property
 
 from rewriter.model.expr import Expr
 from rewriter.model.source import Span
@@ -55,6 +56,20 @@ class Statement:
         yield self
         for child in self.children():
             yield from child.walk()
+
+    @cached_property
+    def family(self) -> tuple[tuple["Statement", int], ...]:
+        """Give the same as walk, each with the place of its parent (-1 for this statement); kept, since blocks are large."""
+        family: list[tuple[Statement, int]] = [(self, -1)]
+        place = 0
+        stack = [(self, 0)]
+        while stack:
+            statement, place = stack.pop()
+            if statement is not self:
+                family.append((statement, place))
+                place = len(family) - 1
+            stack.extend((child, place) for child in reversed(statement.children()))
+        return tuple(family)
 
 
 @dataclass(frozen=True)
