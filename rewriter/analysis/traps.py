@@ -122,6 +122,8 @@ def _group_traps(context: Context, group: Group) -> Iterator[Reason]:
         load = _changing_load(reset, group)
         if load:
             yield context.reason("async-load", load, ", ".join(part.text for part in group.parts))
+    if len({_loads(reset, group) for reset in block.resets}) > 1:
+        yield context.reason("async-load", block.span, "its asynchronous resets load different values")
     outside = sorted(n for n in group.variables if n not in module.variables and module.variables)
     if outside:
         yield context.reason("hierarchical-name", where, _names(frozenset(outside)))
@@ -159,6 +161,20 @@ def _changing_load(reset: AsyncReset, group: Group) -> Span | None:
             if changing:
                 return statement.span
     return None
+
+
+def _loads(reset: AsyncReset, group: Group) -> tuple[tuple[str, tuple[int, int], int | str], ...]:
+    """Give what a reset branch writes where, in order.
+
+    When one of two resets that are active ends, there is no event: the original takes the value of the other one at
+    the next clock edge, which a sleeping bank would miss.
+    """
+    return tuple(
+        (target.variable, target.bits, s.rhs.key if s.rhs.constant is None else s.rhs.constant)
+        for s in around(reset.branch, group.writes)
+        if isinstance(s, Assign)
+        for target in s.targets
+    )
 
 
 def _names(names: frozenset[str]) -> str:
