@@ -4,6 +4,7 @@ import json
 import shutil
 from collections.abc import Iterator, Mapping
 from dataclasses import dataclass
+from functools import cached_property
 from pathlib import Path
 from typing import Any
 
@@ -33,29 +34,41 @@ class Prover:
 
     def __call__(self, fault: Fault, text: str) -> Proof:
         """Run `prove` on a copy of the output folder with the faulty text in it."""
+        return judge(fault, self._prove(text), self._wide_anyway)
+
+    @cached_property
+    def _wide_anyway(self) -> frozenset[str]:
+        """The cells that run too often without a fault: they say nothing about one."""
+        ((_, changed),) = self.rewritten.changed
+        answer = self._prove(changed.read_text(encoding="utf-8"))
+        assert answer["proved"], "the rewrite is not proved without a fault"
+        return frozenset(_place(cell) for cell in answer["cells"] if cell["wider"])
+
+    def _prove(self, text: str) -> Mapping[str, Any]:
         folder = self.scratch / "proved"
         shutil.rmtree(folder, ignore_errors=True)
         shutil.copytree(self.rewritten.folder, folder)
         ((_, changed),) = self.rewritten.changed
         (folder / changed.relative_to(self.rewritten.folder)).write_text(text, encoding="utf-8")
         ran = stillclock("prove", str(folder), "--format", "json")
-        assert ran.status in {0, 1}, f"{fault.id}: the proof gave no answer\n{ran.output[-2000:]}"
-        return judge(fault, json.loads(ran.output[ran.output.index("{") :]))
+        assert ran.status in {0, 1}, f"the proof gave no answer\n{ran.output[-2000:]}"
+        return json.loads(ran.output[ran.output.index("{\n") : ran.output.rindex("}\n") + 1])
 
 
-def judge(fault: Fault, answer: Mapping[str, Any]) -> Proof:
-    """Read what the proof said: a difference, or a cell that wakes in cycles in which nothing is written."""
+def judge(fault: Fault, answer: Mapping[str, Any], wide_anyway: frozenset[str]) -> Proof:
+    """Read what the proof said: a difference, or a cell that newly runs in cycles in which nothing is written."""
     disproved = [cell for cell in answer["cells"] if cell["kind"] == "disproved"]
-    wider = [cell for cell in answer["cells"] if cell["wider"]]
+    wider = [cell for cell in answer["cells"] if cell["wider"] and _place(cell) not in wide_anyway]
     named = any(name in _accepted(fault) for name in _named(disproved, answer["mismatches"]))
     return Proof(
         killed=bool(disproved or wider or answer["mismatches"]),
-        named=named or any(_is_cell(fault, cell) for cell in wider),
+        named=named or any(_place(cell) == fault.bank for cell in wider),
     )
 
 
-def _is_cell(fault: Fault, cell: Mapping[str, Any]) -> bool:
-    return fault.bank == f"{cell['definition']}.{str(cell['cell']).rpartition('.')[2]}"
+def _place(cell: Mapping[str, Any]) -> str:
+    """Name a cell as faults do, `module.instance`."""
+    return f"{cell['definition']}.{str(cell['cell']).rpartition('.')[2]}"
 
 
 def _accepted(fault: Fault) -> set[str]:
