@@ -149,7 +149,7 @@ def tidied(page: Page, within: Span, cuts: list[Cut]) -> list[Cut]:
         else:
             outer.append(cut)
     widened = [_widened(page, within, cut) if not cut.text else cut for cut in outer]
-    return _disjoint(widened)
+    return disjoint(widened)
 
 
 def _widened(page: Page, within: Span, cut: Cut) -> Cut:
@@ -159,26 +159,25 @@ def _widened(page: Page, within: Span, cut: Cut) -> Cut:
     prefix, suffix = page.data[line : cut.start], page.data[cut.end : end]
     if not prefix.strip() and line > within.start:
         if _AFTER.fullmatch(suffix) and end < within.end:
-            return _without_blanks(page, within, Cut(line, end + 1))
+            return without_blanks(page, within, Cut(line, end + 1))
         return Cut(cut.start, cut.end + len(suffix) - len(suffix.lstrip(" \t")))
     if not suffix.strip() or suffix.lstrip().startswith(("//", "/*")):
         return Cut(cut.start - (len(prefix) - len(prefix.rstrip(" \t"))), cut.end)
     return Cut(cut.start, cut.end + len(suffix) - len(suffix.lstrip(" \t")))
 
 
-def _without_blanks(page: Page, within: Span, cut: Cut) -> Cut:
+def without_blanks(page: Page, within: Span, cut: Cut) -> Cut:
     """Take a blank line along when whole lines go and it would end up doubled or at the edge of its block."""
     above = page.data[page.data.rfind("\n", 0, cut.start - 1) + 1 : cut.start]
     below = page.data[cut.end : page.data.find("\n", cut.end) + 1]
-    before = page.data[: cut.start - len(above)]
     if not below.strip() and (not above.strip() or _OPENS.search(above)) and cut.end + len(below) < within.end:
         return Cut(cut.start, cut.end + len(below))
-    if _CLOSES.match(below) and not above.strip() and len(before) > within.start:
+    if _CLOSES.match(below) and not above.strip() and cut.start - len(above) > within.start:
         return Cut(cut.start - len(above), cut.end)
     return cut
 
 
-def _disjoint(cuts: list[Cut]) -> list[Cut]:
+def disjoint(cuts: list[Cut]) -> list[Cut]:
     """Join deletions that came to touch."""
     joined: list[Cut] = []
     for cut in cuts:

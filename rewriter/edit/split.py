@@ -5,7 +5,17 @@ from collections.abc import Iterator
 from dataclasses import dataclass
 from functools import cached_property
 
-from rewriter.edit.cuts import Cut, applied, difference, gaps, has_directive, tidied, whole_line_comments
+from rewriter.edit.cuts import (
+    Cut,
+    applied,
+    difference,
+    disjoint,
+    gaps,
+    has_directive,
+    tidied,
+    whole_line_comments,
+    without_blanks,
+)
 from rewriter.edit.names import COPY_FORMS, Names
 from rewriter.edit.prune import Pruner, check_separate
 from rewriter.edit.temporaries import Temporaries, feeds, simple
@@ -69,7 +79,7 @@ class Splitter:
             if lost and "`" in self._uncommented(start, end):
                 detail = "text of a macro stands among what leaves the block"
                 raise CannotEditError("inactive-code", detail, self._at(start))
-        return tuple(self._with_comments(cut) for cut in cuts)
+        return tuple(disjoint([self._with_comments(cut) for cut in cuts]))
 
     @cached_property
     def _needed_here(self) -> frozenset[str]:
@@ -112,7 +122,7 @@ class Splitter:
             between = data[comment.end : start]
             if comment.end < start and not between.strip() and between.count("\n") == 1:
                 start = self.page.line_start(comment.start)
-        return Cut(start, cut.end)
+        return cut if start == cut.start else without_blanks(self.page, self.block.span, Cut(start, cut.end))
 
     # what leaves
 

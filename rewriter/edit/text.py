@@ -24,6 +24,7 @@ LEXEMES = re.compile(
 )
 
 
+_INDENT = re.compile(r"[ \t]*")
 _WORDS = re.compile(
     LEXEMES.pattern
     + r"|(?P<macro>`[\w$]+)|(?P<number>'[sS]?[bBoOdDhH]\s*[\w?]+)|(?P<member>(?:\.|::)\s*[A-Za-z_][\w$]*)"
@@ -81,8 +82,8 @@ class Page:
 
     def indent(self, offset: int) -> str:
         """Give the white space that starts a line."""
-        start = self.line_start(offset)
-        return self.data[start : start + len(self.data[start:]) - len(self.data[start:].lstrip(" \t"))]
+        found = _INDENT.match(self.data, self.line_start(offset))
+        return found[0] if found else ""
 
     def opens_line(self, offset: int) -> bool:
         """Say whether only white space precedes an offset on its line."""
