@@ -12,11 +12,14 @@ from pyslang.ast import (
     BlockStatement,
     CallExpression,
     EmptyStatement,
+    Expression,
     ExpressionKind,
     StatementKind,
     StatementList,
     SubroutineSymbol,
     Symbol,
+    UnaryExpression,
+    UnaryOperator,
     ValueExpressionBase,
 )
 
@@ -28,6 +31,11 @@ _PURE_SYSTEM = frozenset((
     "$size", "$left", "$right", "$low", "$high", "$increment", "$dimensions", "$unpacked_dimensions", "$rtoi", "$itor",
     "$bitstoreal", "$realtobits", "$pow", "$ln", "$log10", "$exp", "$sqrt", "$floor", "$ceil",
 ))
+
+STEPS = {
+    UnaryOperator.Preincrement: "++", UnaryOperator.Postincrement: "++",
+    UnaryOperator.Predecrement: "--", UnaryOperator.Postdecrement: "--",
+}
 
 
 @dataclass(frozen=True)
@@ -70,12 +78,21 @@ class Calls:
     def _examine(self, subroutine: SubroutineSymbol, seen: frozenset[SubroutineSymbol]) -> CallFacts:
         body = subroutine.body
         reads: list[ValueExpressionBase] = []
-        writes: list[AssignmentExpression] = []
+        writes: list[Expression] = []
         calls: list[CallExpression] = []
         other: list[object] = []
+
+        def assign(expression: AssignmentExpression) -> None:
+            writes.append(expression.left)
+
+        def step(expression: UnaryExpression) -> None:
+            if expression.op in STEPS:
+                writes.append(expression.operand)
+
         table: dict[object, object] = {
             ExpressionKind.NamedValue: reads.append, ExpressionKind.HierarchicalValue: reads.append,
-            ExpressionKind.Assignment: writes.append, ExpressionKind.Call: calls.append,
+            ExpressionKind.Assignment: assign, ExpressionKind.UnaryOp: step,
+            ExpressionKind.Call: calls.append,
             StatementKind.Timed: other.append, StatementKind.Wait: other.append,
             StatementKind.ProceduralAssign: other.append, StatementKind.EventTrigger: other.append,
         }
@@ -83,7 +100,7 @@ class Calls:
         pure = not other and all(argument.direction is ArgumentDirection.In for argument in subroutine.arguments)
         hidden = {self._names.path(read.symbol) for read in reads if _is_hidden(read.symbol, subroutine)}
         for write in writes:
-            root = write.left.getSymbolReference(allowPacked=True)
+            root = write.getSymbolReference(allowPacked=True)
             pure = pure and root is not None and not _is_hidden(root, subroutine)
         for call in calls:
             callee = call.subroutine

@@ -17,9 +17,9 @@ from pyslang.ast import (
     ExpressionKind,
     MemberAccessExpression,
     NamedValueExpression,
+    NetSymbol,
     PortConnection,
     PortSymbol,
-    ProceduralBlockSymbol,
     RangeSelectExpression,
     Symbol,
     SymbolKind,
@@ -29,6 +29,7 @@ from pyslang.ast import (
 
 from rewriter.frontend.blocks import event_signals
 from rewriter.frontend.bodies import Body
+from rewriter.frontend.drivers import net_value
 from rewriter.frontend.elaboration import body_of
 from rewriter.frontend.expressions import names_in
 from rewriter.frontend.places import Locator
@@ -94,6 +95,9 @@ def _assigned(analysis: AnalysisManager, name: ValueExpressionBase) -> Iterator[
         source = driver.containingSymbol
         if isinstance(source, ContinuousAssignSymbol) and isinstance(source.assignment, AssignmentExpression):
             yield source.assignment.right
+    initial = net_value(name.symbol)
+    if initial is not None:
+        yield initial
 
 
 def data_uses(body: Body, clocks: Iterable[Symbol], locator: Locator) -> dict[Symbol, Span]:
@@ -110,7 +114,7 @@ def data_uses(body: Body, clocks: Iterable[Symbol], locator: Locator) -> dict[Sy
         for name in reads.found():
             uses.setdefault(origin[name.symbol], locator.span(name.sourceRange))
         for alias, clock in reads.aliases.items():
-            origin.setdefault(alias, origin[clock])
+            origin.setdefault(alias, clock)
     return uses
 
 
@@ -121,20 +125,24 @@ class _DataReads:
         self._body = body
         self._clocks = clocks
         self._hits: list[ValueExpressionBase] = []
-        self._other: set[tuple[int, int]] = set()
+        self._other = {_key(signal) for signal in event_expressions(body)}
         self.aliases: dict[Symbol, Symbol] = {}
 
     def found(self) -> Iterator[ValueExpressionBase]:
         """Give every such read."""
-        self._body.symbol.visit(lookup_table={
-            ExpressionKind.NamedValue: self._read, ExpressionKind.Assignment: self._write,
-            SymbolKind.ContinuousAssign: self._assign, SymbolKind.ProceduralBlock: self._block,
-            SymbolKind.Instance: _skip,
-        })
-        yield from (hit for hit in self._hits if _key(hit) not in self._other)
+        self._body.symbol.visit(lookup_table={ExpressionKind.NamedValue: self._read, SymbolKind.Instance: _skip})
+        if self._remaining():  # most clocks are only events; only the others are worth a closer look
+            self._body.symbol.visit(lookup_table={
+                ExpressionKind.Assignment: self._write, SymbolKind.ContinuousAssign: self._assign,
+                SymbolKind.Net: self._net, SymbolKind.Instance: _skip,
+            })
+        yield from self._remaining()
         for _, child in self._body.children:
             for connection in child.portConnections:
                 yield from self._connected(connection)
+
+    def _remaining(self) -> list[ValueExpressionBase]:
+        return [hit for hit in self._hits if _key(hit) not in self._other]
 
     def _read(self, name: ValueExpressionBase) -> None:
         if name.symbol in self._clocks:
@@ -143,16 +151,23 @@ class _DataReads:
     def _write(self, assignment: AssignmentExpression) -> None:
         self._other.update(_key(_root(part)) for part in parts_of(assignment.left))
 
-    def _assign(self, symbol: ContinuousAssignSymbol) -> VisitAction:
-        pair = _plain_alias(symbol)
-        if pair is None or pair[1] not in self._clocks:
-            return VisitAction.Advance
-        self.aliases[pair[0]] = pair[1]
-        return VisitAction.Skip
+    def _assign(self, symbol: ContinuousAssignSymbol) -> None:
+        assignment = symbol.assignment
+        if isinstance(assignment, AssignmentExpression):
+            self._alias(_plain(assignment.left), assignment.right)
 
-    def _block(self, block: ProceduralBlockSymbol) -> VisitAction:
-        self._other.update(_key(signal) for signal in event_signals(block))
-        return VisitAction.Advance
+    def _net(self, net: NetSymbol) -> None:
+        initial = net_value(net)
+        if initial is not None:
+            self._alias(net, initial)
+
+    def _alias(self, left: Symbol | Expression, right: Expression) -> None:
+        """Note `left` as another name of a clock when it takes its plain value."""
+        source = _plain(right)
+        symbol = left.symbol if isinstance(left, NamedValueExpression) else left
+        if isinstance(symbol, Symbol) and isinstance(source, NamedValueExpression) and source.symbol in self._clocks:
+            self.aliases[symbol] = self._clocks[source.symbol]
+            self._other.add(_key(source))
 
     def _connected(self, connection: PortConnection) -> Iterator[ValueExpressionBase]:
         expression, port = connection.expression, connection.port
@@ -182,13 +197,3 @@ def _plain(expression: Expression) -> Expression:
     while isinstance(expression, ConversionExpression) and expression.isImplicit:
         expression = expression.operand
     return expression
-
-
-def _plain_alias(symbol: ContinuousAssignSymbol) -> tuple[Symbol, Symbol] | None:
-    assignment = symbol.assignment
-    if not isinstance(assignment, AssignmentExpression):
-        return None
-    left, right = _plain(assignment.left), _plain(assignment.right)
-    if isinstance(left, NamedValueExpression) and isinstance(right, NamedValueExpression):
-        return left.symbol, right.symbol
-    return None

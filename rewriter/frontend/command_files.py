@@ -146,12 +146,18 @@ class _Splitter:
         self.at = match.end()
         return self.environment.get(match[match.lastindex or 0], "")
 
+    def _inside(self, character: str) -> str:
+        """Resolve what double quotes leave its meaning."""
+        if character == "\\":
+            return self._escaped()
+        return self._variable() if character == "$" else character
+
     def _quoted(self, quote: str) -> str:
         parts: list[str] = []
         while self.at < len(self.text) and self.text[self.at] != quote:
             character = self.text[self.at]
             self.at += 1
-            parts.append(self._escaped() if character == "\\" and quote == '"' else character)
+            parts.append(self._inside(character) if quote == '"' else character)
         self.at += 1
         return "".join(parts)
 

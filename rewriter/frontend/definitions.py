@@ -6,6 +6,7 @@
 
 import re
 from collections.abc import Iterator
+from dataclasses import replace
 from functools import cache
 
 import pyslang
@@ -73,24 +74,27 @@ class Definitions:
     def all(self) -> dict[str, Definition]:
         """Give every definition by name; the first one where a name stands twice."""
         found: dict[str, Definition] = {}
+        stray: list[InstanceSyntax] = []
         for tree in self._trees:
-            modules: list[ModuleDeclarationSyntax] = []
-            tree.root.visit(lookup_table={
-                SyntaxKind.ModuleDeclaration: modules.append, SyntaxKind.InterfaceDeclaration: modules.append,
-                SyntaxKind.ProgramDeclaration: modules.append})
-            for module in modules:
-                definition = self._definition(module, library=tree.isLibraryUnit)
+            contents = _Contents(tree)
+            for module, instantiations in contents.modules:
+                definition = self._definition(module, instantiations, library=tree.isLibraryUnit)
                 found.setdefault(definition.name, definition)
+            stray += self._instances(contents.outside)
+        if stray:  # `bind` outside modules: it changes what some module holds, so the first module carries it
+            first = next(iter(found.values()))
+            found[first.name] = replace(first, instances=first.instances + tuple(stray))
         return found
 
-    def _definition(self, module: ModuleDeclarationSyntax, *, library: bool) -> Definition:
+    def _definition(self, module: ModuleDeclarationSyntax, instantiations: list[HierarchyInstantiationSyntax], *,
+                    library: bool) -> Definition:
         span = self._locator.span(module.sourceRange)
         name = module.header.name.valueText
         bodies = self._bodies.get(name, [])
         scale = bodies[0].symbol.timeScale if bodies else None
         return Definition(
             name=name, span=span, language=Language.VERILOG if span.file.endswith(_VERILOG) else Language.SYSTEMVERILOG,
-            ports=self._ports(module), instances=tuple(self._instances(module)),
+            ports=self._ports(module), instances=tuple(self._instances(instantiations)),
             identifiers=self._identifiers(span), trap=self._trap(module, span, name, library=library),
             cell_like=any(is_cell_like(body) for body in bodies), generated=self._is_generated(span.file),
             timescale=str(scale).replace(" ", "") if scale is not None else None, in_hierarchy=bool(bodies),
@@ -144,10 +148,8 @@ class Definitions:
     def _has_directives(self, span: Span) -> bool:
         return bool(_DIRECTIVE.search(self._texts[span.file], span.start, span.end))
 
-    def _instances(self, module: ModuleDeclarationSyntax) -> Iterator[InstanceSyntax]:
-        found: list[HierarchyInstantiationSyntax] = []
-        module.visit(lookup_table={SyntaxKind.HierarchyInstantiation: found.append})
-        for instantiation in found:
+    def _instances(self, instantiations: list[HierarchyInstantiationSyntax]) -> Iterator[InstanceSyntax]:
+        for instantiation in instantiations:
             for instance in instantiation.instances:
                 if isinstance(instance, HierarchicalInstanceSyntax):
                     yield self._instance(instantiation, instance)
@@ -171,6 +173,28 @@ class Definitions:
             in_macro=self._in_macro(instantiation.sourceRange) or self._in_macro(instance.sourceRange),
             is_bind=isinstance(instantiation.parent, BindDirectiveSyntax),
             connected=tuple(c.name.valueText for c in items if isinstance(c, NamedPortConnectionSyntax)))
+
+
+class _Contents:
+    """List the modules of a tree with the instantiations that stand in each, in one walk."""
+
+    def __init__(self, tree: SyntaxTree) -> None:
+        self.modules: list[tuple[ModuleDeclarationSyntax, list[HierarchyInstantiationSyntax]]] = []
+        self.outside: list[HierarchyInstantiationSyntax] = []
+        tree.root.visit(lookup_table={
+            SyntaxKind.ModuleDeclaration: self._module, SyntaxKind.InterfaceDeclaration: self._module,
+            SyntaxKind.ProgramDeclaration: self._module, SyntaxKind.HierarchyInstantiation: self._instantiation})
+
+    def _module(self, module: ModuleDeclarationSyntax) -> None:
+        self.modules.append((module, []))
+
+    def _instantiation(self, instantiation: HierarchyInstantiationSyntax) -> None:
+        parent = instantiation.parent
+        bind = isinstance(parent, BindDirectiveSyntax)
+        if not self.modules or (bind and (parent.parent is None or parent.parent.kind is SyntaxKind.CompilationUnit)):
+            self.outside.append(instantiation)
+        else:
+            self.modules[-1][1].append(instantiation)
 
 
 @cache

@@ -8,13 +8,15 @@ from pyslang.analysis import AnalysisManager, DriverFlags, DriverKind, DriverSou
 from pyslang.ast import (
     AssignmentExpression,
     ContinuousAssignSymbol,
+    Expression,
     NetSymbol,
     ProceduralBlockSymbol,
+    Symbol,
     TimedStatement,
     ValueSymbol,
 )
 
-from rewriter.frontend.bits import slang_bits
+from rewriter.frontend.bits import slang_bits, width_of
 from rewriter.frontend.blocks import is_clocked
 from rewriter.frontend.expressions import Expressions
 from rewriter.frontend.places import Locator
@@ -39,7 +41,7 @@ def kind_of(driver: ValueDriver) -> WriterKind | None:
     if driver.isInputPort:
         return None
     if driver.flags & DriverFlags.Initializer:
-        return WriterKind.CONTINUOUS if isinstance(driver.symbol, NetSymbol) else None
+        return None
     if driver.flags & DriverFlags.OutputPort:
         return WriterKind.INSTANCE
     if isinstance(source, ProceduralBlockSymbol) and driver.source is DriverSource.Always:
@@ -47,6 +49,15 @@ def kind_of(driver: ValueDriver) -> WriterKind | None:
     if driver.kind is DriverKind.Continuous:
         return WriterKind.CONTINUOUS if isinstance(source, ContinuousAssignSymbol) else WriterKind.INSTANCE
     return _PROCEDURES.get(driver.source, WriterKind.COMBINATIONAL)
+
+
+def net_value(symbol: Symbol) -> Expression | None:
+    """Give the expression of `wire w = …`, a continuous assignment that slang does not count as a driver."""
+    return symbol.initializer if isinstance(symbol, NetSymbol) else None
+
+
+def _whole(symbol: ValueSymbol) -> tuple[int, int]:
+    return max(width_of(symbol.type) - 1, 0), 0
 
 
 def writers_of(symbol: ValueSymbol, analysis: AnalysisManager, locator: Locator) -> tuple[Writer, ...]:
@@ -61,6 +72,9 @@ def writers_of(symbol: ValueSymbol, analysis: AnalysisManager, locator: Locator)
         block = isinstance(source, (ProceduralBlockSymbol, ContinuousAssignSymbol)) and syntax is not None
         place = syntax.sourceRange if block and syntax is not None else driver.sourceRange
         found.append(Writer(kind, slang_bits(driver.bounds, symbol.type), locator.span(place)))
+    initial = net_value(symbol)
+    if initial is not None:
+        found.append(Writer(WriterKind.CONTINUOUS, _whole(symbol), locator.span(initial.sourceRange)))
     return tuple(dict.fromkeys(found))
 
 
@@ -96,6 +110,10 @@ class LazyDrivers:
             if kind is not None:
                 span, value = self._value(driver, kind, expressions)
                 found.append(Driver(kind, slang_bits(driver.bounds, symbol.type), span, value))
+        initial = net_value(symbol)
+        if initial is not None:
+            span = self._locator.span(initial.sourceRange)
+            found.append(Driver(WriterKind.CONTINUOUS, _whole(symbol), span, expressions.lower(initial)))
         return tuple(dict.fromkeys(found))
 
     def _value(self, driver: ValueDriver, kind: WriterKind,
@@ -106,8 +124,7 @@ class LazyDrivers:
             assignment = source.assignment if isinstance(source, ContinuousAssignSymbol) else None
             if isinstance(assignment, AssignmentExpression):
                 return self._locator.span(assignment.sourceRange), expressions.lower(assignment.right)
-            initial = driver.symbol.initializer
-            return span, expressions.lower(initial) if initial is not None else None
+            return span, None
         if isinstance(source, ProceduralBlockSymbol) and kind in (WriterKind.COMBINATIONAL, WriterKind.LATCH):
             body = source.body
             inner = body.stmt if isinstance(body, TimedStatement) else body

@@ -4,6 +4,7 @@
 # pyright: reportUnnecessaryComparison=false
 # (pyslang's stubs leave `span[…]` undefined and do not tell what can be None)
 
+import codecs
 import difflib
 import os
 from collections.abc import Sequence
@@ -41,7 +42,8 @@ class Parsed:
             self.driver, self.extra_trees, self.warnings = self._parse(source, {**given, **mended})
             self.manager = self.driver.sourceManager
             self.locator = Locator(self.manager)
-        libraries = tuple(p for p, kind in self.locator.kinds.items() if kind is pyslang.BufferKind.LibraryFile)
+        trees = [tree.root for tree in self.driver.syntaxTrees if tree.isLibraryUnit]
+        libraries = tuple(dict.fromkeys(self.locator.span(root.sourceRange).file for root in trees))
         self.source = RtlSource(source.files, libraries, source.include_dirs, source.defines, source.undefines,
                                 source.tops, source.parameters, source.options, tuple(texts.values()))
 
@@ -59,7 +61,7 @@ class Parsed:
         return driver, virtual, warnings
 
     def _texts(self, given: dict[str, SourceText]) -> dict[str, SourceText]:
-        paths = (path for path in self.locator.kinds if os.path.isabs(path))  # noqa: PTH117 (they are strings)
+        paths = (path for path in self.locator.paths if os.path.isabs(path))  # noqa: PTH117 (they are strings)
         return {path: given.get(path) or SourceText(path, Path(path).read_bytes()) for path in paths}
 
 
@@ -194,7 +196,14 @@ def _is_utf8(data: bytes) -> bool:
 
 
 def _decode(data: bytes) -> str:
-    """Give text in which every byte keeps its offset: bytes of other encodings become `?` one for one."""
-    if _is_utf8(data):
-        return data.decode()
-    return bytes(byte if byte < 0x80 else 0x3F for byte in data).decode()  # noqa: PLR2004 (the ASCII range)
+    """Give text in which every byte keeps its offset: bytes that are no UTF-8 become `?` one for one."""
+    return data.decode(errors=_ONE_FOR_ONE)
+
+
+def _question_marks(error: UnicodeError) -> tuple[str, int]:
+    assert isinstance(error, UnicodeDecodeError)  # noqa: S101 (registered for decoding alone)
+    return "?" * (error.end - error.start), error.end
+
+
+_ONE_FOR_ONE = "one-for-one"
+codecs.register_error(_ONE_FOR_ONE, _question_marks)

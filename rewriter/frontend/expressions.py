@@ -30,6 +30,7 @@ from pyslang.ast import (
     SimpleAssignmentPatternExpression,
     Statement,
     Symbol,
+    Type,
     UnaryExpression,
     UnaryOperator,
     UnbasedUnsizedIntegerLiteral,
@@ -131,7 +132,7 @@ class Expressions:
         kind = expression.type
         path = self.names.path(symbol)
         return Reference(
-            span, path, kind.bitWidth, kind.isSigned, self._evaluate(expression) if fixed else None, copyable,
+            span, path, _width(kind), kind.isSigned, self._evaluate(expression) if fixed else None, copyable,
             name=self._text(span) if outside else path, is_parameter=fixed, is_local=is_local(symbol),
             is_hierarchical=outside,
         )
@@ -183,7 +184,7 @@ class Expressions:
             return self.lower(expression.operand)
         operand = self.lower(expression.operand)
         kind = expression.type
-        return self._operation(expression, "cast", (operand,), f"{kind}'({operand.key})", kind.bitWidth,
+        return self._operation(expression, "cast", (operand,), f"{kind}'({operand.key})", _width(kind),
                                signed=kind.isSigned)
 
     def _conditional(self, expression: ConditionalExpression) -> Expr:
@@ -238,7 +239,7 @@ class Expressions:
         bits = place.bits if place is not None and place.exact else None
         root_fixed = all(not isinstance(node, Reference) or node.is_parameter for node in value.walk())
         fixed = root_fixed and all(index.constant is not None for index in indices)
-        return Select(span, f"{value.key}{suffix}", kind.bitWidth, kind.isSigned,
+        return Select(span, f"{value.key}{suffix}", _width(kind), kind.isSigned,
                       self._evaluate(expression) if fixed else None, copyable, value=value, indices=indices, bits=bits)
 
     def _inside(self, expression: InsideExpression) -> Expr:
@@ -266,7 +267,7 @@ class Expressions:
         kind = expression.type
         fixed = facts.pure and not facts.hidden_reads and all(a.constant is not None for a in arguments)
         return Call(
-            span, f"{facts.name}({','.join(argument.key for argument in arguments)})", kind.bitWidth, kind.isSigned,
+            span, f"{facts.name}({','.join(argument.key for argument in arguments)})", _width(kind), kind.isSigned,
             self._evaluate(expression) if fixed else None, copyable, function=facts.name, arguments=arguments,
             hidden_reads=facts.hidden_reads, pure=facts.pure, system=facts.system)
 
@@ -274,8 +275,8 @@ class Expressions:
         span, copyable = self._locator.placed(expression.sourceRange)
         kind = expression.type
         reads = tuple(self._reference(name) for name in names_in(expression))
-        return Opaque(span, f"opaque@{span.file}:{span.start}-{span.end}", kind.bitWidth if kind.isIntegral else 0,
-                      kind.isSigned, None, copyable, kind=expression.kind.name, operands=reads)
+        return Opaque(span, f"opaque@{span.file}:{span.start}-{span.end}", _width(kind), kind.isSigned, None,
+                      copyable, kind=expression.kind.name, operands=reads)
 
 
 def names_in(part: Expression | Statement | Symbol) -> list[ValueExpressionBase]:
@@ -284,6 +285,10 @@ def names_in(part: Expression | Statement | Symbol) -> list[ValueExpressionBase]
     part.visit(lookup_table={
         ExpressionKind.NamedValue: found.append, ExpressionKind.HierarchicalValue: found.append})
     return found
+
+
+def _width(kind: Type) -> int:
+    return kind.bitWidth if kind.isIntegral else 0
 
 
 def _short_circuit(operator: str, left: int | None, right: int | None) -> int | None:

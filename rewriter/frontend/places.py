@@ -27,7 +27,7 @@ class Locator:
         self._manager = manager
         self._files: dict[int, str] = {}
         self._texts: dict[int, bytes] = {}
-        self.kinds: dict[str, pyslang.BufferKind] = {}
+        self.paths: list[str] = []
         included: Counter[str] = Counter()
         for buffer in manager.getAllBuffers():
             kind = manager.getBufferKind(buffer)
@@ -35,7 +35,7 @@ class Locator:
                 path = str(manager.getFullPath(buffer))
                 if path.startswith("<"):  # a define of the command line
                     continue
-                self.kinds[path] = kind
+                self.paths.append(path)
                 self._files[buffer.id] = path
                 included[path] += kind is pyslang.BufferKind.IncludeFile
         self.shared = frozenset(path for path, times in included.items() if times > 1)

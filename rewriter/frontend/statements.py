@@ -28,7 +28,6 @@ from pyslang.ast import (
     StatementBlockKind,
     StatementList,
     UnaryExpression,
-    UnaryOperator,
     VariableDeclStatement,
 )
 from pyslang.ast import Statement as Bound
@@ -45,6 +44,7 @@ from pyslang.syntax import (
     SyntaxNode,
 )
 
+from rewriter.frontend.calls import STEPS
 from rewriter.frontend.expressions import Expressions, names_in
 from rewriter.frontend.places import Locator
 from rewriter.frontend.targets import targets_of
@@ -65,10 +65,6 @@ from rewriter.model.statement import (
     Target,
 )
 
-_STEPS = {
-    UnaryOperator.Preincrement: "++", UnaryOperator.Postincrement: "++",
-    UnaryOperator.Predecrement: "--", UnaryOperator.Postdecrement: "--",
-}
 # IEEE 1800-2017 clause 21: they print, and write no variable
 _PRINTING = ("$display", "$write", "$strobe", "$monitor", "$fdisplay", "$fwrite", "$fstrobe", "$fmonitor",
              "$info", "$warning", "$error")
@@ -281,7 +277,7 @@ class Statements:
         expression = statement.expr
         if isinstance(expression, AssignmentExpression):
             return self._assign(statement, expression)
-        if isinstance(expression, UnaryExpression) and expression.op in _STEPS:
+        if isinstance(expression, UnaryExpression) and expression.op in STEPS:
             return self._step(statement, expression)
         if isinstance(expression, CallExpression) and self._expressions.calls.does_nothing(expression):
             return self._empty(statement)
@@ -315,7 +311,7 @@ class Statements:
         if targets is None:
             return self._opaque(statement)
         operand = self._expressions.lower(expression.operand)
-        operator = _STEPS[expression.op]
+        operator = STEPS[expression.op]
         rhs = Operation(self._locator.span(expression.sourceRange), f"({operand.key}{operator})", operand.width,
                         operand.signed, None, copyable=False, operator=operator, operands=(operand,))
         return Assign(self._span(statement), targets, rhs, blocking=True)
