@@ -80,15 +80,23 @@ def _reason(evidence: CellEvidence) -> Reason | None:
 
 
 def rejection_warnings(run: Run, back: Mapping[RegisterId, Reason]) -> Iterator[Note]:
-    """Say which banks the proof sends back, each with its first counterexample."""
+    """Say which banks the proof sends back, each counterexample once."""
+    shown: set[str] = set()
     for bank in run.plan.banks:
         reason = back.get(bank.registers[0])
         if reason is None:
             continue
-        found = (*run.evidence.get(bank.cell, ()), *(run.proof.mismatches if run.proof else ()))
-        tables = [one.counterexample.table() for one in found if one.counterexample]
         head = f"bank {bank.name} is left out, {reason.word}" + (f": {reason.detail}" if reason.detail else "")
-        yield Note("\n".join((head, *tables[:1])), help=_way_out(bank, reason))
+        table = _example(run, bank, reason)
+        yield Note(head if not table or table in shown else f"{head}\n{table}", help=_way_out(bank, reason))
+        shown.add(table)
+
+
+def _example(run: Run, bank: Bank, reason: Reason) -> str:
+    """Give the counterexample of a bank, or of what its rewrite harmed; empty without."""
+    own = run.evidence.get(bank.cell, ())
+    outside = run.proof.mismatches if run.proof and reason.word == "disproved" else ()
+    return next((found.counterexample.table() for found in (*own, *outside) if found.counterexample), "")
 
 
 def _way_out(bank: Bank, reason: Reason) -> str:

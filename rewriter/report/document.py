@@ -148,6 +148,7 @@ def _evidence(evidence: CellEvidence) -> Json:
         "kind": evidence.kind.value,
         "registers": list(evidence.registers),
         "failing": list(evidence.failing),
+        "dead": list(evidence.dead),
         "reason": evidence.reason or None,
         "detail": evidence.detail,
         "counterexample": _counterexample(evidence.counterexample),
@@ -167,6 +168,7 @@ def _outside(result: ProofResult) -> Json:
         "lemma": dict(result.lemma),
         "mismatches": [_mismatch(mismatch) for mismatch in result.mismatches],
         "undecided": list(result.undecided),
+        "notes": list(result.notes),
         "unread": [{"module": module, "message": message} for module, message in result.unread],
         "equal_wakes": [list(group) for group in result.equal_wakes],
     }

@@ -184,6 +184,7 @@ def proof(result: ProofResult, top: str) -> str:
     lines += [f"undecided: {text}" for text in result.undecided]
     lines += [f"{module}: the engine could not read it: {text}" for module, text in result.unread]
     lines += _wider(result.cells)
+    lines += [f"note: {text}" for text in result.notes]
     return "\n".join(lines) + "\n"
 
 
