@@ -67,10 +67,19 @@ def _objection(run: Run, bank: Bank, *, allow_unproved: bool) -> Reason | None:
     """Give why a bank must not be written, None when it may."""
     seen = run.evidence.get(bank.cell, ())
     if not seen:
-        return None if allow_unproved else Reason("not-checked", "the engine did not meet its cell")
+        return None if allow_unproved else Reason("not-checked", _unread(run, bank))
     reasons = [reason for evidence in seen if (reason := _reason(evidence))]
     hard = [reason for reason in reasons if reason.word not in _OPEN]
     return next(iter(hard or ([] if allow_unproved else reasons)), None)
+
+
+def _unread(run: Run, bank: Bank) -> str:
+    """Say why the engine did not meet a bank's cell: it could not read the module, or one above it."""
+    instances = {path for m in run.design.modules if m.definition == bank.block.definition for path in m.instances}
+    for path, message in run.proof.unread if run.proof else ():
+        if any(instance == path or instance.startswith(f"{path}.") for instance in instances):
+            return f"the engine could not read {path}: {message}"
+    return "the engine did not meet its cell"
 
 
 def _reason(evidence: CellEvidence) -> Reason | None:
