@@ -3,7 +3,7 @@
 import re
 from collections.abc import Callable, Iterator
 
-from rewriter.model.expr import Expr
+from rewriter.model.expr import Expr, Operation
 from rewriter.model.plan import Liveness
 from rewriter.model.wake import Always, And, Atom, Formula, Never, Not, Or
 
@@ -50,6 +50,15 @@ def negate(operand: Formula) -> Formula:
             return inner
         case _:
             return Not(operand)
+
+
+def condition(expr: Expr) -> Formula:
+    """Make the formula of a source condition; a leading `!` becomes a negation, so that two of them cancel."""
+    match expr:
+        case Operation(operator="!", operands=(operand,)) if expr.copyable and operand.copyable and operand.width:
+            return negate(condition(operand))
+        case _:
+            return Atom(expr)
 
 
 def branch(condition: Formula, then: Formula, other: Formula) -> Formula:

@@ -14,7 +14,7 @@ from rewriter.model.expr import Conditional, Expr, Operation, Reference, Select
 from rewriter.model.plan import Liveness
 from rewriter.model.source import SourceText
 from rewriter.model.statement import Assign, Block, Case, If, Loop, Statement, Target
-from rewriter.model.wake import Atom, Formula, Leaf, Skeleton, WakeCondition
+from rewriter.model.wake import Formula, Leaf, Skeleton, WakeCondition
 
 _COMMENT = re.compile(r"//[^\n]*|/\*.*?\*/", re.DOTALL)
 
@@ -111,7 +111,7 @@ class _Reader:
         if expr.reads() & self.temporaries.names or self.unseen_locals(expr):
             raise _NeedsSkeletonError
         check_condition(expr)
-        return Atom(expr)
+        return f.condition(expr)
 
     def unseen_locals(self, expr: Expr) -> bool:
         """Say whether an expression reads a variable of the block that only the block can see (loops apart)."""
@@ -289,7 +289,7 @@ def _changed(rhs: Expr, target: Target) -> Formula:
     if not isinstance(rhs, Conditional) or rhs.condition is None or rhs.then is None or rhs.other is None:
         return f.ALWAYS
     then, other = _changed(rhs.then, target), _changed(rhs.other, target)
-    return then if then == other else f.branch(Atom(rhs.condition), then, other)
+    return then if then == other else f.branch(f.condition(rhs.condition), then, other)
 
 
 def _is_itself(rhs: Expr, target: Target) -> bool:

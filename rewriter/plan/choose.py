@@ -91,7 +91,7 @@ def _left(proposal: Proposal, word: str, detail: str = "") -> Refusal:
 
 def _by_site(proposals: Iterable[Proposal]) -> list[tuple[WakeCondition, list[Proposal]]]:
     sites: dict[_Site, list[Proposal]] = {}
-    for p in sorted(proposals, key=lambda p: (p.register.block.span, p.register.parts)):
+    for p in sorted(proposals, key=lambda p: p.register.block.span):  # within a block in order of writing
         block = p.register.block
         site = _Site(block.definition, block.span.file, p.scope, p.clock, p.edge, p.conditions[0].key)
         sites.setdefault(site, []).append(p)
@@ -125,7 +125,8 @@ def _united(
             kept.append((_union([wake for wake, _ in group]), members))
         else:
             kept.extend(group)
-    return sorted(kept, key=lambda site: site[1][0].register)
+    place = {p.register: n for n, p in enumerate(settled.proposals)}
+    return sorted(kept, key=lambda site: (site[1][0].register.block.span, place[site[1][0].register]))
 
 
 def _union(wakes: list[WakeCondition]) -> WakeCondition:
