@@ -1,8 +1,10 @@
 """Front end: RTL arguments in, the model's Design out; the only user of pyslang."""
 
+import gc
 import os
 from collections import defaultdict
-from collections.abc import Sequence
+from collections.abc import Generator, Sequence
+from contextlib import contextmanager
 
 from rewriter.frontend.bodies import Body, by_definition, collect
 from rewriter.frontend.census import count
@@ -42,6 +44,19 @@ def elaborate(source: RtlSource) -> Design:
     return _lower(Elaboration(Parsed(source)))
 
 
+@contextmanager
+def _no_collection() -> Generator[None]:
+    """Pause the collector: lowering makes many objects and no garbage, and each pass would walk them all."""
+    enabled = gc.isenabled()
+    gc.disable()
+    try:
+        yield
+    finally:
+        if enabled:
+            gc.enable()
+
+
+@_no_collection()
 def _lower(elaboration: Elaboration) -> Design:
     source = elaboration.parsed.source
     texts = {text.path: text.data for text in source.texts}

@@ -5,6 +5,7 @@
 # (pyslang's stubs leave `span[…]` undefined and do not tell what can be None)
 
 import re
+import string
 from collections.abc import Iterator
 from dataclasses import replace
 from functools import cache
@@ -49,8 +50,9 @@ from rewriter.model.design import (
 )
 from rewriter.model.source import Span
 
-_ESCAPED = re.compile(r"\\(\S+)")
-_IDENTIFIER = re.compile(r"(?a:\b[A-Za-z_][\w$]*)")
+_ESCAPED = re.compile(rb"\\(\S+)")
+_IN_WORDS = f"{string.ascii_letters}{string.digits}_$".encode()
+_WORDS = bytes(byte if byte in _IN_WORDS else ord(" ") for byte in range(256))
 _DIRECTIVE = re.compile(rb"`(?:ifn?def|elsif|else|endif|include|define|undef|pragma|line)\b")
 _PROTECTED = re.compile(rb"`(?:pragma\s+protect|protected?\b)")
 _GENERATED = re.compile(
@@ -101,8 +103,9 @@ class Definitions:
             is_interface=module.kind is not SyntaxKind.ModuleDeclaration)
 
     def _identifiers(self, span: Span) -> frozenset[str]:
-        text = self._texts[span.file][span.start : span.end].decode("latin-1")
-        return frozenset(_IDENTIFIER.findall(text)).union(_ESCAPED.findall(text))
+        text = self._texts[span.file][span.start : span.end]
+        words = {*text.translate(_WORDS).split(), *_ESCAPED.findall(text)}  # numbers come along, and do no harm
+        return frozenset(word.decode("latin-1") for word in words)
 
     def _trap(self, module: ModuleDeclarationSyntax, span: Span, name: str, *, library: bool) -> Trap | None:
         source = module.sourceRange

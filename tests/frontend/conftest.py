@@ -12,7 +12,6 @@ from rewriter.model.design import ClockedBlock, Design, Module
 from rewriter.model.source import Span
 from rewriter.model.statement import Statement
 
-
 S = TypeVar("S", bound=Statement)
 
 

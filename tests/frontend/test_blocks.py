@@ -12,7 +12,7 @@ def block(sample: Reader, text: str, before: str = "", declared: str = "", name:
                   f"{text}\nendmodule\n", name=name)
 
 
-@pytest.mark.parametrize(("events", "test", "high"), [
+@pytest.mark.parametrize("events,test,high", [
     ("negedge rst_n", "!rst_n", False), ("negedge rst_n", "~rst_n", False), ("negedge rst_n", "rst_n == 0", False),
     ("negedge rst_n", "rst_n == 1'b0", False), ("negedge rst_n", "1'b0 == rst_n", False),
     ("negedge rst_n", "rst_n != 1", False), ("negedge rst_n", "rst_n !== 1'b1", False),
@@ -40,7 +40,8 @@ def test_the_clock_may_stand_last(sample: Reader) -> None:
 def test_two_resets_in_a_chain_and_in_one_test(sample: Reader) -> None:
     chain = block(sample, "always @(posedge clk or negedge rst_n or posedge rst)\n"
                           "if (!rst_n) q <= 0; else if (rst) q <= 1; else q <= d;")
-    joined = block(sample, "always @(posedge clk or negedge rst_n or posedge rst) if (!rst_n || rst) q <= 0; else q <= d;")
+    joined = block(sample, "always @(posedge clk or negedge rst_n or posedge rst) if (!rst_n || rst) q <= 0; "
+                           "else q <= d;")
     for found in (chain, joined):
         assert [(r.event.signal.key, r.active_high) for r in found.block.resets] == [("rst_n", False), ("rst", True)]
         assert found.block.synchronous is not None

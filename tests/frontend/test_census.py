@@ -27,7 +27,7 @@ def core(monkeypatch: pytest.MonkeyPatch) -> Callable[[str], Design]:
     return lambda name: read(["-f", str(LISTS / f"{name}.f")])
 
 
-@pytest.mark.parametrize(("name", "flops", "arrays", "blocks"), [
+@pytest.mark.parametrize("name,flops,arrays,blocks", [
     ("picorv32", 1234, 1024, 9),
     ("ibex", 2016, 0, 74),
     ("cv32e40p", 2613, 0, 60),
@@ -41,7 +41,7 @@ def test_census(core: Callable[[str], Design], name: str, flops: int, arrays: in
     assert not [trap for m in design.modules for block in m.blocks for trap in block.traps]
 
 
-@pytest.mark.parametrize(("name", "cells"), [
+@pytest.mark.parametrize("name,cells", [
     ("picorv32", set[str]()), ("vexriscv_full", set[str]()), ("ibex", {"prim_generic_clock_gating"}),
     ("cv32e40p", {"cv32e40p_clock_gate"}),
 ])
@@ -86,7 +86,7 @@ def _check(statement: Statement, text: Callable[[Span], str]) -> None:
 
 
 def test_reading_costs_little_more_than_slang_alone(core: Callable[[str], Design]) -> None:
-    """Reading ibex may take three times what slang's own parse and elaboration take, best of seven runs each, taken in turn."""
+    """Reading ibex may take three times slang's own parse and elaboration: best of seven runs each, in turn."""
     arguments = f"-f {LISTS / 'ibex.f'}"
 
     def slang_alone() -> None:

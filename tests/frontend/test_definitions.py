@@ -13,7 +13,7 @@ def ports(sample: Reader, text: str) -> tuple[Sample, Definition]:
     return found, found.design.definitions["m"]
 
 
-@pytest.mark.parametrize(("text", "style", "names"), [
+@pytest.mark.parametrize("text,style,names", [
     ("module m(input a, output b); endmodule", PortStyle.ANSI, ("a", "b")),
     ("module m(a, b); input a; output b; endmodule", PortStyle.NON_ANSI, ("a", "b")),
     ("module m(a, .b(c)); input a; output c; endmodule", PortStyle.NON_ANSI, ("a", "b")),
@@ -130,7 +130,7 @@ def test_protected_text_is_not_edited(sample: Reader) -> None:
     assert trap.reason == "encrypted"
 
 
-@pytest.mark.parametrize(("text", "cell"), [
+@pytest.mark.parametrize("text,cell", [
     ("input c, e, t, output g); logic l; always_latch if (!c) l = e | t; assign g = l & c;", True),
     ("input c, e, output g); reg l; always @(c or e) if (!c) l <= e; assign g = c & l;", True),
     ("input c, e, output g); reg l; always @(c or e) if (c) l <= e; assign g = c | l;", True),

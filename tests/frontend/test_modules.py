@@ -10,7 +10,8 @@ LEAF = ("module leaf #(parameter W = 2)(input ck, rn, input [W-1:0] d, output re
 def test_bodies_are_shared_by_equal_parameters(sample: Reader) -> None:
     found = sample(LEAF + "module pair(input c, r, input [3:0] d, output [3:0] q);\n"
                    "leaf #(4) a(c, r, d, q); leaf #(4) b(c, r, d, ); leaf s(c, r, d[1:0], ); endmodule\n"
-                   "module m(input c, r, input [3:0] d, output [3:0] q, p); pair x(c, r, d, q), y(c, r, d, p); endmodule")
+                   "module m(input c, r, input [3:0] d, output [3:0] q, p); pair x(c, r, d, q), y(c, r, d, p); "
+                   "endmodule")
     leaves = {m.key: m for m in found.design.modules if m.definition == "leaf"}
     assert leaves["m.x.a"].instances == ("m.x.a", "m.x.b", "m.y.a", "m.y.b")
     assert leaves["m.x.s"].instances == ("m.x.s", "m.y.s")
@@ -28,10 +29,13 @@ def test_instance_arrays_and_generate_loops(sample: Reader) -> None:
 
 def test_declarations_make_copies(sample: Reader) -> None:
     found = sample("typedef enum logic [1:0] {A, B} st_t;\n"
-                   "module m #(parameter W = 4, parameter type T = logic)(input wire clk, input [W-1:0] d, output reg [3:0] q);\n"
-                   "reg signed [7:0] a; st_t s; logic [1:0][3:0] b [0:1]; integer i; enum {X, Y} e; T t; (* keep, a = 2 *) bit k;\n"
+                   "module m #(parameter W = 4, parameter type T = logic)(input wire clk, "
+                   "input [W-1:0] d, output reg [3:0] q);\n"
+                   "reg signed [7:0] a; st_t s; logic [1:0][3:0] b [0:1]; integer i; enum {X, Y} e; T t; "
+                   "(* keep, a = 2 *) bit k;\n"
                    "struct packed { logic z; } z; wire [2:0] w = d;\n"
-                   "always @(posedge clk) begin a <= d; s <= A; b[0] <= d; i <= d; e <= X; t <= d; k <= w; q <= d; z <= d; end\n"
+                   "always @(posedge clk) begin a <= d; s <= A; b[0] <= d; i <= d; e <= X; t <= d; k <= w; "
+                   "q <= d; z <= d; end\n"
                    "endmodule")
     texts = {name: (v.declaration, v.unpacked, v.width, v.element_width) for name, v in found.top.variables.items()}
     assert texts == {
@@ -102,7 +106,8 @@ def test_a_clock_read_as_data_is_found(sample: Reader) -> None:
 
 def test_a_clock_made_here_is_not_read_by_being_written(sample: Reader) -> None:
     found = sample("module cg(input c, e, output g); assign g = c & e; endmodule\n"
-                   "module m(input clk, en, d, output reg q); wire g; cg u(clk, en, g); always @(posedge g) q <= d; endmodule")
+                   "module m(input clk, en, d, output reg q); wire g; cg u(clk, en, g); always @(posedge g) "
+                   "q <= d; endmodule")
     assert found.top.clock_uses == {}
 
 
@@ -110,8 +115,10 @@ def test_registers_that_drive_clocks_are_found(sample: Reader) -> None:
     found = sample(LEAF + "module mid(input c, r, input [1:0] d); leaf u(c, r, d, ); endmodule\n"
                    "module m(input clk, input [1:0] d, output reg plain);\n"
                    "reg div, rst, through, own, quiet; wire w; assign w = through & d[0];\n"
-                   "always @(posedge clk) begin div <= ~div; rst <= d[0]; through <= d[1]; own <= d[0]; quiet <= 1; end\n"
-                   "mid a(div, rst, d); leaf b(w, 1'b1, {quiet, quiet}, ); always @(posedge own) plain <= d[0];\nendmodule")
+                   "always @(posedge clk) begin div <= ~div; rst <= d[0]; through <= d[1]; own <= d[0]; "
+                   "quiet <= 1; end\n"
+                   "mid a(div, rst, d); leaf b(w, 1'b1, {quiet, quiet}, ); always @(posedge own) "
+                   "plain <= d[0];\nendmodule")
     assert set(found.top.drives_clocks) == {"div", "rst", "through", "own"}
 
 
@@ -124,6 +131,8 @@ def test_black_boxes_are_warned_of(sample: Reader) -> None:
 
 
 def test_names_used_from_outside_are_found(sample: Reader) -> None:
-    found = sample("module leaf(input c); logic h; always @(posedge c) begin : b logic t; t = ~h; h <= t; end endmodule\n"
-                   "module m(input clk, output o, p); leaf u(clk), v(clk); assign o = u.h; assign p = m.v.b.t; endmodule")
+    found = sample("module leaf(input c); logic h; always @(posedge c) begin : b logic t; t = ~h; h <= t; "
+                   "end endmodule\n"
+                   "module m(input clk, output o, p); leaf u(clk), v(clk); assign o = u.h; assign p = m.v.b.t; "
+                   "endmodule")
     assert found.module("leaf").external_references == {"h", "b.t"}

@@ -74,7 +74,8 @@ def test_locals_never_collide_with_each_other_or_the_module(sample: Reader) -> N
 
 
 def test_for_loops(sample: Reader) -> None:
-    found = body(sample, "begin for (int k = 0; k < 8; k = k + 1) q[k] <= d[k]; for (i = 0; i < 4; i = i + 1) r[2*i] <= d[i]; end",
+    found = body(sample, "begin for (int k = 0; k < 8; k = k + 1) q[k] <= d[k]; for (i = 0; i < 4; "
+                         "i = i + 1) r[2*i] <= d[i]; end",
                  "integer i;")
     inner, outer = found.all(Loop)
     assert found.text(inner.head) == "for (int k = 0; k < 8; k = k + 1)"
@@ -106,8 +107,10 @@ def test_targets(sample: Reader) -> None:
         ("q[5:2] <= d;", "q", (5, 2), Index.CONSTANT, False), ("q[s] <= en;", "q", (7, 0), Index.VARIABLE, False),
         ("q[s +: 2] <= d;", "q", (7, 0), Index.VARIABLE, False), ("p.hi <= d;", "p", (7, 5), Index.CONSTANT, False),
         ("p.lo[s] <= en;", "p", (4, 0), Index.VARIABLE, False), ("up[0] <= en;", "up", (7, 7), Index.CONSTANT, False),
-        ("two[1][0] <= en;", "two", (4, 4), Index.CONSTANT, False), ("two[s] <= d;", "two", (7, 0), Index.VARIABLE, False),
-        ("mem[1] <= d;", "mem", (23, 16), Index.CONSTANT, False), ("mem[s] <= d;", "mem", (31, 0), Index.VARIABLE, True),
+        ("two[1][0] <= en;", "two", (4, 4), Index.CONSTANT, False),
+        ("two[s] <= d;", "two", (7, 0), Index.VARIABLE, False),
+        ("mem[1] <= d;", "mem", (23, 16), Index.CONSTANT, False),
+        ("mem[s] <= d;", "mem", (31, 0), Index.VARIABLE, True),
         ("mem[2][s] <= en;", "mem", (15, 8), Index.VARIABLE, False),
         ("deep[0][s] <= d;", "deep", (31, 16), Index.VARIABLE, True),
     ):
@@ -124,7 +127,8 @@ def test_side_effects_are_opaque(sample: Reader) -> None:
     task = "task put(input [7:0] v); r <= v; endtask"
     for text, what, harmless in (
         ('$display("%d", d);', "call of $display", True), ("put(d);", "call of put", False),
-        ("assert (en);", "assertion", True), ("$finish;", "call of $finish", False), ("-> e;", "EventTrigger statement", False),
+        ("assert (en);", "assertion", True), ("$finish;", "call of $finish", False),
+        ("-> e;", "EventTrigger statement", False),
         ("begin : b if (en) disable b; q <= d; end", "Disable statement", False),
         ("fork q <= d; join", "Block statement", False), ("force q = d;", "ProceduralAssign statement", False),
     ):
@@ -134,6 +138,7 @@ def test_side_effects_are_opaque(sample: Reader) -> None:
 
 
 def test_parts_lie_inside_their_statement(sample: Reader) -> None:
-    found = body(sample, "begin : x if (en) begin q <= d; end else if (s == 1) case (s) 0: r <= d; default: ; endcase end")
+    found = body(sample, "begin : x if (en) begin q <= d; end else if (s == 1) case (s) 0: r <= d; default: ; "
+                         "endcase end")
     for statement in found.block.body.walk():
         assert all(statement.span.covers(child.span) for child in statement.children())
