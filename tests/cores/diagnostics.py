@@ -39,7 +39,10 @@ def verilator(list_file: Path, *extra: str) -> Counter[str]:
 
 def slang(list_file: Path) -> Counter[str]:
     """Elaborate with slang's own driver, and collect what it says; in a process, as it prints past Python."""
-    ran = run((sys.executable, "-c", _DRIVER, f"slang -Wextra -F {shlex.quote(str(list_file))}"), list_file.parent)
+    ran = run(
+        (sys.executable, "-c", _DRIVER, f"slang -DSTILLCLOCK_SIMULATION -F {shlex.quote(str(list_file))}"),
+        list_file.parent,
+    )
     assert ran.status == 0, ran.output[-3000:]
     found = _SLANG.findall(ran.output)
     return Counter(f"{kind} {Path(name).name}: {_LINE.sub('', text)}" for name, kind, text in found)

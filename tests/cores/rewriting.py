@@ -15,14 +15,20 @@ TEST_PORT = "test_en"  # the default of --test-port
 
 @dataclass(frozen=True)
 class GatedBank:
-    """What the report says of a bank with a cell; `bits` are those of one occurrence."""
+    """What the report says of a bank with a cell; its occurrences may differ in width."""
 
     name: str
     module: str
     instance: str
     registers: tuple[str, ...]
-    bits: int
+    widths: frozenset[int]
     evidence: str
+
+    @property
+    def bits(self) -> int:
+        """Give the bits of one occurrence, where all are alike."""
+        (bits,) = self.widths
+        return bits
 
     @property
     def place(self) -> str:
@@ -94,10 +100,8 @@ def _files(folder: Path) -> tuple[Path, ...]:
 
 def _bank(bank: dict[str, Any], instance: str) -> GatedBank:
     widths = {int(occurrence["bits"]) for occurrence in bank["occurrences"]}
-    assert len(widths) == 1, f"{bank['name']} has occurrences of several widths: {widths}"
-    return GatedBank(
-        bank["name"], bank["module"], instance, tuple(bank["registers"]), widths.pop(), bank["evidence"]["kind"]
-    )
+    registers = tuple(bank["registers"])
+    return GatedBank(bank["name"], bank["module"], instance, registers, frozenset(widths), bank["evidence"]["kind"])
 
 
 def _original(design: Core, path: Path) -> Path:

@@ -180,4 +180,4 @@ def test_planting_touches_nothing_else() -> None:
 
 
 def _bank(name: str, bits: int) -> GatedBank:
-    return GatedBank(name, "quay", f"u_icg_{name}", (name,), bits, "proved")
+    return GatedBank(name, "quay", f"u_icg_{name}", (name,), frozenset({bits}), "proved")
