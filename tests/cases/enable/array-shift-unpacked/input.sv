@@ -1,0 +1,17 @@
+// expect: hop gated
+module frog_hops (
+    input  logic       clk, rst_n,
+    input  logic       jump,
+    input  logic [3:0] pad,
+    output logic [3:0] landed
+);
+    logic [3:0] hop [3];
+    assign landed = hop[2];
+    always_ff @(posedge clk or negedge rst_n)
+        if (!rst_n) for (int i = 0; i < 3; i++) hop[i] <= '0;
+        else if (jump) begin
+            hop[0] <= pad;
+            hop[1] <= hop[0];
+            hop[2] <= hop[1];
+        end
+endmodule

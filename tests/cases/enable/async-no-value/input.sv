@@ -1,0 +1,16 @@
+// expect: kept gated
+// expect: shown gated
+// `kept` has no reset value: while the reset lasts it holds, also at clock edges.
+module tide_memory (
+    input  logic       clk, rst_n,
+    input  logic       store,
+    input  logic [7:0] level,
+    output logic [7:0] kept, shown
+);
+    always_ff @(posedge clk or negedge rst_n)
+        if (!rst_n) shown <= '0;
+        else if (store) begin
+            shown <= level;
+            kept <= level;
+        end
+endmodule

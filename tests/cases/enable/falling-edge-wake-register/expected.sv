@@ -1,0 +1,21 @@
+// expect: film gated
+// The falling-edge bank wakes on a register of the rising edge of the same clock: half a cycle is enough.
+module film_winder (
+    input  logic       clk, rst_n,
+    input  logic       shutter,
+    input  logic [9:0] frame,
+    output logic [9:0] film,
+    input  wire        test_en
+);
+    logic armed;
+    always_ff @(posedge clk or negedge rst_n)
+        if (!rst_n) armed <= 1'b0;
+        else armed <= shutter;
+    // stillclock: film sleeps unless it is written
+    wire wake_film = armed;
+    wire gclk_film;
+    stillclock_icg_n u_icg_film (.clk(clk), .wake(wake_film), .test(test_en), .gclk(gclk_film));
+    always_ff @(negedge gclk_film or negedge rst_n)
+        if (!rst_n) film <= '0;
+        else if (armed) film <= frame;
+endmodule

@@ -1,0 +1,15 @@
+// expect: cells.honey gated
+module honeycomb #(parameter int N = 3) (
+    input  logic           clk, rst_n,
+    input  logic [N-1:0]   fill,
+    input  logic [5:0]     nectar,
+    output logic [6*N-1:0] comb
+);
+    for (genvar c = 0; c < N; c++) begin : cells
+        logic [5:0] honey;
+        always_ff @(posedge clk or negedge rst_n)
+            if (!rst_n) honey <= '0;
+            else if (fill[c]) honey <= nectar + 6'(c);
+        assign comb[6*c +: 6] = honey;
+    end
+endmodule

@@ -1,0 +1,36 @@
+// expect: score gated
+// More branches than a person would read in one expression.
+module archery (
+    input  logic       clk, rst_n,
+    input  logic       bull, inner, magpie, outer, miss, bonus, wind, late, foul,
+    input  logic [9:0] hit,
+    output logic [9:0] score,
+    input  wire        test_en
+);
+    // stillclock: score sleeps unless it is written; the branches are those of its block
+    logic wake_score;
+    always_comb begin
+        wake_score = 1'b0;
+        if (foul) ;
+        else if (bull) wake_score = 1'b1;
+        else if (inner) begin
+            if (!wind) wake_score = 1'b1;
+        end else if (magpie) begin
+            if (!late) wake_score = 1'b1;
+        end else if (outer) wake_score = 1'b1;
+        else if (miss) begin
+            if (bonus) wake_score = 1'b1;
+        end else if (late && wind) wake_score = 1'b1;
+    end
+    wire gclk_score;
+    stillclock_icg u_icg_score (.clk(clk), .wake(wake_score), .test(test_en), .gclk(gclk_score));
+    always_ff @(posedge gclk_score or negedge rst_n)
+        if (!rst_n) score <= '0;
+        else if (foul) score <= score;
+        else if (bull) score <= score + 10'd10;
+        else if (inner) begin if (!wind) score <= score + 10'd8; end
+        else if (magpie) begin if (!late) score <= score + 10'd6; end
+        else if (outer) score <= score + hit;
+        else if (miss) begin if (bonus) score <= score + 10'd1; end
+        else if (late && wind) score <= '0;
+endmodule

@@ -1,0 +1,25 @@
+// expect: salt gated
+// expect: pepper gated
+// expect: stir left never-holds
+// Two registers of a mixed block and one of another block wake together: one cell for all three.
+module soup_pot (
+    input  logic       clk, rst_n,
+    input  logic       season,
+    input  logic [3:0] pinch,
+    output logic [3:0] salt, pepper, stir, herbs
+);
+    always_ff @(posedge clk or negedge rst_n)
+        if (!rst_n) begin
+            salt <= '0;
+            pepper <= '0;
+            stir <= '0;
+        end else begin
+            stir <= stir + 4'd1;
+            if (season) begin
+                salt <= pinch;
+                pepper <= ~pinch;
+            end
+        end
+    always_ff @(posedge clk)
+        if (season) herbs <= pinch;
+endmodule

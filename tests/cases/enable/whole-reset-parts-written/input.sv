@@ -1,0 +1,15 @@
+// expect: brew gated
+// The reset writes the whole word, the enables its halves: one register that wakes for both.
+module tea_urn (
+    input  logic        clk, rst,
+    input  logic        fill, steep,
+    input  logic [7:0]  leaves,
+    output logic [15:0] brew
+);
+    always_ff @(posedge clk)
+        if (rst) brew <= '0;
+        else begin
+            if (fill)  brew[7:0]  <= leaves;
+            if (steep) brew[15:8] <= leaves;
+        end
+endmodule

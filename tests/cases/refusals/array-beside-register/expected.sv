@@ -1,0 +1,26 @@
+// expect: depot left array
+// expect: last gated
+// The array keeps its clock; the register beside it in the block is still gated.
+module truck_depot (
+    input  logic       clk,
+    input  logic       arrive,
+    input  logic [2:0] bay,
+    input  logic [7:0] truck,
+    output logic [7:0] last, out,
+    input  wire        test_en
+);
+    logic [7:0] depot [0:7];
+    assign out = depot[bay];
+    always_ff @(posedge clk)
+        if (arrive) begin
+            depot[bay] <= truck;
+        end
+    // stillclock: last sleeps unless it is written
+    wire wake_last = arrive;
+    wire gclk_last;
+    stillclock_icg u_icg_last (.clk(clk), .wake(wake_last), .test(test_en), .gclk(gclk_last));
+    always_ff @(posedge gclk_last)
+        if (arrive) begin
+            last <= truck;
+        end
+endmodule

@@ -1,0 +1,1 @@
+    always_ff @(posedge clk) if (hit) drum <= skin;
