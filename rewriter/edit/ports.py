@@ -66,7 +66,7 @@ def _first_port(page: Page, definition: Definition, text: str) -> Edit:
 def _last_port(page: Page, definition: Definition, name: str) -> list[Edit]:
     end = definition.ports.last_end
     if not page.rest_is_comment(end) or page.line_end(end) >= definition.ports.span.end:
-        return [_insert(page, end, f", input wire {name}", PORT)]
+        return [_insert(page, end, f"{_comma(page, end)} input wire {name}", PORT)]
     line = page.data[page.line_start(end) : end]
     comma_first = line.lstrip(" \t").startswith(",")
     indent = page.indent(end)
@@ -74,8 +74,11 @@ def _last_port(page: Page, definition: Definition, name: str) -> list[Edit]:
         return [_insert(page, page.line_end(end), f"{page.newline}{indent}, input wire {name}", PORT)]
     port = _aligned(page, definition, name)
     if page.line_end(end) == end:
-        return [_insert(page, end, f",{page.newline}{port}", PORT)]
-    return [_insert(page, end, ",", PORT), _insert(page, page.line_end(end), f"{page.newline}{port}", PORT)]
+        return [_insert(page, end, f"{_comma(page, end)}{page.newline}{port}", PORT)]
+    return [
+        _insert(page, end, _comma(page, end), PORT),
+        _insert(page, page.line_end(end), f"{page.newline}{port}", PORT),
+    ]
 
 
 def _aligned(page: Page, definition: Definition, name: str) -> str:
@@ -102,10 +105,10 @@ def _last_name(page: Page, definition: Definition, name: str) -> Edit:
     line = page.data[page.line_start(end) : end]
     one_per_line = page.rest_is_comment(end) and re.fullmatch(r"[ \t]*,?[ \t]*[\w$\\]\S*", line)
     if not one_per_line:
-        return _insert(page, end, f", {name}", PORT)
+        return _insert(page, end, f"{_comma(page, end)} {name}", PORT)
     if line.lstrip(" \t").startswith(","):
         return _insert(page, end, f"{page.newline}{page.indent(end)}, {name}", PORT)
-    return _insert(page, end, f",{page.newline}{page.indent(end)}{name}", PORT)
+    return _insert(page, end, f"{_comma(page, end)}{page.newline}{page.indent(end)}{name}", PORT)
 
 
 def _declaration(page: Page, definition: Definition, name: str) -> Edit:
@@ -161,7 +164,8 @@ def _ordered(page: Page, instance: InstanceSyntax, port: NewPort, value: str) ->
         return _insert(page, start, f"{value}, ", CONNECTION)
     missing = port.others - ordered_count(page.data[start:end])
     blank_last = "," in COMMENT.sub("", page.data[instance.last_end : end])
-    return _insert(page, end if blank_last else instance.last_end, f"{', ' * missing}, {value}", CONNECTION)
+    at = end if blank_last else instance.last_end
+    return _insert(page, at, f"{_comma(page, at)}{' ,' * missing} {value}", CONNECTION)
 
 
 def ordered_count(inside: str) -> int:
@@ -173,6 +177,12 @@ def ordered_count(inside: str) -> int:
         depth += (character in "([{") - (character in ")]}")
         count += depth == 0 and character == ","
     return count
+
+
+def _comma(page: Page, offset: int) -> str:
+    """Give a comma; a name that starts with a backslash ends only at white space."""
+    line = page.data[page.line_start(offset) : offset]
+    return " ," if re.search(r"\\\S+\Z", line) else ","
 
 
 def _insert(page: Page, offset: int, text: str, why: str) -> Edit:

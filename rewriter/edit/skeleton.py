@@ -173,7 +173,7 @@ class SkeletonWriter:
         outer = self._synchronous
         used = words("\n".join(branches))
         hoisted = outer.declarations if isinstance(outer, Block) else ()
-        return [copied(self.page.text(d.span)) for d in hoisted if used & set(d.names)]
+        return [copied(self.page.text(d.span)) for d in hoisted if used & {_simple(path) for path in d.names}]
 
     def _temporaries(self, branches: list[str]) -> list[str]:
         """Declare the module's temporaries and loop variables that the copy writes."""
@@ -185,8 +185,11 @@ class SkeletonWriter:
         blocks = (inner for inner in self.block.body.walk() if isinstance(inner, Block))
         local = {name for inner in blocks for declaration in inner.declarations for name in declaration.names}
         loops = (n for inner in self._tree.walk() if isinstance(inner, Loop) for n in inner.outer_variables)
-        found = {_simple(path): path for path in (*self.skeleton.temporaries, *loops)}
-        return {name: path for name, path in sorted(found.items()) if name in used and name not in local}
+        paths = {path for path in (*self.skeleton.temporaries, *loops) if _simple(path) in used and path not in local}
+        found = {_simple(path): path for path in sorted(paths)}
+        if len(found) < len(paths):
+            raise CannotEditError("not-copyable", "two temporaries of one name are written", self.block.span)
+        return found
 
     def _declared_at(self, path: str) -> tuple[str, int, str]:
         """Order variables as the text declares them."""

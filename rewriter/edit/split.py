@@ -186,11 +186,10 @@ class Splitter:
         return self.temporaries.private - self._needed_here - earlier
 
     def _unused_declarations(self, pruned: Statement, needed: frozenset[str]) -> Iterator[Cut]:
-        used = {simple(path) for path in needed}
         for statement in pruned.walk():
             if isinstance(statement, Block):
                 for declaration in statement.declarations:
-                    if not used & set(declaration.names):
+                    if not needed & set(declaration.names):
                         yield Cut(declaration.span.start, declaration.span.end)
 
     def _labels(

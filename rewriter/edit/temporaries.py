@@ -41,11 +41,11 @@ class Temporaries:
     def local(self) -> frozenset[str]:
         """Give those that the block declares itself: they come along with their declarations."""
         inside = frozenset(target.variable for target in self._targets() if target.is_local)
-        return inside | {path for path in self._loops if simple(path) in self.declared_inside}
+        return inside | (self._loops & self.declared_inside)
 
     @cached_property
     def declared_inside(self) -> frozenset[str]:
-        """Give the names that some begin-end of the block declares."""
+        """Give the paths of what some begin-end of the block declares."""
         blocks = (s for s in self.block.body.walk() if isinstance(s, Block))
         return frozenset(name for block in blocks for declaration in block.declarations for name in declaration.names)
 

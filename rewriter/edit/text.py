@@ -114,7 +114,8 @@ def copied(text: str) -> str:
     """
     if DIRECTIVE.search(text):
         raise CannotEditError("not-copyable", "a compiler directive stands inside the condition")
-    plain = LEXEMES.sub(lambda found: " " if found["comment"] else found[0], text)
+    marked = LEXEMES.sub(lambda found: "\0" if found["comment"] else found[0], text)
+    plain = re.sub(r"[ \t]*\0[ \t]*", " ", marked)
     lines = [line.strip() for line in re.split(r"[ \t\r\f]*\\?\n[ \t\r\f]*", plain)]
     joined = " ".join(line for line in lines if line)
     return joined + " " if re.search(r"\\\S+\Z", joined) else joined
