@@ -180,7 +180,6 @@ def _compare(*, orequal: bool, swap: bool) -> "Meaning":
         a, b = _operands(p, i, max(p["A_WIDTH"], p["B_WIDTH"]))
         x, y = (b.value, a.value) if swap else (a.value, b.value)
         signed = bool(p["A_SIGNED"] and p["B_SIGNED"])
-        # x <= y is not y < x
         result = arithmetic.less(aig, y, x, signed=signed) ^ 1 if orequal else arithmetic.less(aig, x, y, signed=signed)
         doubt = aig.any_of(a.unknown + b.unknown)
         return _single((result, doubt), p["Y_WIDTH"])
@@ -262,7 +261,7 @@ def _table(aig: Aig, p: Parameters, i: Mapping[str, Word]) -> Word:
     return _word(bits)
 
 
-def _spread(aig: Aig, p: Parameters, i: Mapping[str, Word]) -> Word:
+def _spread(aig: Aig, _: Parameters, i: Mapping[str, Word]) -> Word:
     """$demux: A at place S, 0 elsewhere."""
     places: list[Bit] = [(TRUE, FALSE)]
     for select in _bits(i["S"]):

@@ -19,6 +19,9 @@ from rewriter.logic.netlist import Cell, Module
 
 CONSTANTS: dict[str, Bit] = {"0": (FALSE, FALSE), "1": (TRUE, FALSE), "x": (FALSE, TRUE), "z": (FALSE, TRUE)}
 
+_ONE = frozenset(("$buf", "$pos", "$not"))
+_TWO = {"$and": bit_and, "$or": bit_or, "$xor": bit_xor, "$xnor": bit_xor}
+
 Leaf = Callable[[int, "Cone"], Bit]
 """Gives the value of a net that no combinational cell drives."""
 
@@ -106,16 +109,9 @@ class Cone:
         if kind == "$pmux":
             return self._priority(cell, lane)
         a = self.bit(operand(cell, "A", lane))
-        if kind in ("$buf", "$pos"):
-            return a
-        if kind == "$not":
-            return a[0] ^ 1, a[1]
-        b = self.bit(operand(cell, "B", lane))
-        if kind == "$and":
-            return bit_and(aig, a, b)
-        if kind == "$or":
-            return bit_or(aig, a, b)
-        value, unknown = bit_xor(aig, a, b)
+        if kind in _ONE:
+            return a[0] ^ (kind == "$not"), a[1]
+        value, unknown = _TWO[kind](aig, a, self.bit(operand(cell, "B", lane)))
         return value ^ (kind == "$xnor"), unknown
 
     def _priority(self, cell: Cell, lane: int) -> Bit:

@@ -3,7 +3,7 @@
 import shutil
 import tempfile
 import time
-from collections.abc import Iterator
+from collections.abc import Generator
 from concurrent.futures import ThreadPoolExecutor
 from contextlib import contextmanager
 from dataclasses import dataclass
@@ -28,14 +28,12 @@ class Elaborated:
         sides: gold and gate, or the gate alone; empty when the engine failed.
         message: of the engine, when it failed.
         notes: what a reader of the result must know.
-        flattened: instances were not kept apart.
         seconds: time in the engine, and in reading its output.
     """
 
     sides: tuple[Netlist, ...]
     message: str
     notes: tuple[str, ...]
-    flattened: bool
     seconds: tuple[float, float]
 
 
@@ -53,7 +51,7 @@ class _Mode:
 
 
 @contextmanager
-def work_folder() -> Iterator[Path]:
+def work_folder() -> Generator[Path]:
     """Lend a private folder that is removed afterwards."""
     folder = Path(tempfile.mkdtemp(prefix="stillclock-"))
     try:
@@ -106,25 +104,27 @@ class _Elaboration:
                 mode = _Mode(hierarchy, synthesis, memories)
                 if self._read(mode):
                     return self._elaborated(mode, time.monotonic() - start)
-        return Elaborated((), self.first_message, (), flattened=False, seconds=(time.monotonic() - start, 0.0))
+        return Elaborated((), self.first_message, (), seconds=(time.monotonic() - start, 0.0))
 
     def _elaborated(self, mode: _Mode, seconds: float) -> Elaborated:
         start = time.monotonic()
         notes: list[str] = []
         mended = [sorted(stage.mended) for stage in self.stages]
         if any(lines != mended[0] for lines in mended):
-            return Elaborated((), self.first_message, (), flattened=False, seconds=(seconds, 0.0))
+            return Elaborated((), self.first_message, (), seconds=(seconds, 0.0))
         notes += [f"initial value left out of the proof: {line}" for line in mended[0]]
         if mode.synthesis:
             notes.append("the engine reads the texts only with SYNTHESIS defined: the proof holds for that")
         sides = tuple(read_netlist(self.folder / f"{stage.side}.json", self.top) for stage in self.stages)
-        flattened = mode.hierarchy != _HIERARCHY[0]
-        return Elaborated(sides, "", tuple(notes), flattened, (seconds, time.monotonic() - start))
+        if mode.hierarchy != _HIERARCHY[0]:
+            notes.append("the engine cannot keep all instances apart: some are proved as part of the one above")
+        return Elaborated(sides, "", tuple(notes), (seconds, time.monotonic() - start))
 
     def _read(self, mode: _Mode) -> bool:
         for _ in range(_MENDS):
             with ThreadPoolExecutor(len(self.stages)) as pool:
-                results = list(pool.map(lambda stage: self._one(stage, mode), self.stages))
+                runs = [pool.submit(self._one, stage, mode) for stage in self.stages]
+                results = [run.result() for run in runs]
             if all(ran.ok for ran in results):
                 return True
             for stage, ran in zip(self.stages, results, strict=True):

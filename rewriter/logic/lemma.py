@@ -39,6 +39,8 @@ opt_clean
 sat -tempinduct -prove-asserts -set-assumes -maxsteps 8 -verify lemma"""
 
 PROVED = "proved"
+_ALWAYS = "passes every edge, which is sound while gated blocks keep their conditions"
+_MISSING = re.compile(r"Module `\\?(\w+)' referenced in module .* is not part of the design")
 _MODULE = re.compile(r"\bmodule\s+(\w+)")
 
 
@@ -65,20 +67,16 @@ def _prove(cell: str, texts: tuple[str, ...]) -> str:
     """Prove a wrapper as simulation sees it, and as synthesis does where what it instantiates is at hand."""
     simulated = _run(cell, texts, (EXACT,), _GATES)
     if simulated:
-        if not _run(cell, texts, (EXACT,), _PASSES):
-            return f"{PROVED}: passes every edge, which is sound while gated blocks keep their conditions"
-        return f"not proved: {simulated}"
-    if not any("SYNTHESIS" in text for text in texts):
-        return PROVED
-    synthesised = _run(cell, texts, (EXACT, "SYNTHESIS"), _GATES)
+        passes = not _run(cell, texts, (EXACT,), _PASSES)
+        return f"{PROVED}: {_ALWAYS}" if passes else f"not proved: {simulated}"
+    synthesised = _run(cell, texts, (EXACT, "SYNTHESIS"), _GATES) if any("SYNTHESIS" in t for t in texts) else ""
     if not synthesised:
         return PROVED
-    missing = re.search(r"Module `\\?(\w+)' referenced in module .* is not part of the design", synthesised)
-    if missing:
-        if missing[1] == NEEDS_MAP:
-            return f"{PROVED}: the simulation model; synthesis needs a cell map"
-        return f"{PROVED}: the simulation model; there is no model of {missing[1]} to check"
-    return f"not proved: as synthesised, {synthesised}"
+    missing = _MISSING.search(synthesised)
+    if not missing:
+        return f"not proved: as synthesised, {synthesised}"
+    why = "synthesis needs a cell map" if missing[1] == NEEDS_MAP else f"there is no model of {missing[1]} to check"
+    return f"{PROVED}: the simulation model; {why}"
 
 
 def _run(cell: str, texts: tuple[str, ...], defines: tuple[str, ...], goal: str) -> str:

@@ -28,10 +28,14 @@ class Port:
 
 @dataclass(frozen=True)
 class Cell:
-    """A cell or instance; `inputs` and `outputs` by port name, bits least first."""
+    """A cell or instance; `inputs` and `outputs` by port name, bits least first.
+
+    `definition` is the type without the path that the engine adds to keep instances apart.
+    """
 
     name: str
     type: str
+    definition: str
     parameters: Mapping[str, int | str]
     inputs: Mapping[str, tuple[Bit, ...]]
     outputs: Mapping[str, tuple[Bit, ...]]
@@ -65,6 +69,7 @@ class Module:
 
     Args:
         name: `definition$top.path`, or the definition alone.
+        definition: name of the definition.
         black_box: it has no body.
         init: initial values by bit, `0` or `1`.
         names: public names by bit.
@@ -72,19 +77,14 @@ class Module:
     """
 
     name: str
+    definition: str
     black_box: bool
     ports: Mapping[str, Port]
     cells: tuple[Cell, ...]
     names: Mapping[int, tuple[Name, ...]]
     widths: Mapping[str, int]
     init: Mapping[int, str]
-    scopes: Mapping[str, str]
     digest: str
-
-    @property
-    def definition(self) -> str:
-        """Give the name of the definition."""
-        return definition_of(self.name)
 
     @cached_property
     def instances(self) -> dict[str, Cell]:
@@ -108,7 +108,7 @@ class Netlist:
         """Give every module instance with a body, by hierarchical path, parents first."""
         top = self.modules[self.top]
         found: dict[str, Module] = {}
-        stack = [(top.definition, top)]
+        stack = [(self.top, top)]
         while stack:
             path, module = stack.pop()
             found[path] = module
@@ -119,40 +119,85 @@ class Netlist:
         return found
 
 
-def definition_of(name: str) -> str:
-    """Take the instance path off a module's name."""
-    return name.split("$", 1)[0] if not name.startswith("$") else name
-
-
 def read_netlist(path: Path, top: str) -> Netlist:
     """Read what the engine wrote."""
     with path.open(encoding="utf-8") as file:
         data = cast("dict[str, Any]", json.load(file))
     raw = cast("dict[str, dict[str, Any]]", data["modules"])
-    kinds = {name: {port: p["direction"] for port, p in module["ports"].items()} for name, module in raw.items()}
-    modules = {name: _module(name, module, kinds) for name, module in raw.items()}
-    return Netlist(top, modules)
+    reader = _Reader(
+        {name: name.split(f"${top}.", 1)[0] for name in raw},
+        {name: {port: p["direction"] for port, p in module["ports"].items()} for name, module in raw.items()},
+    )
+    return Netlist(top, {name: reader.module(name, module) for name, module in raw.items()})
 
 
-def _module(name: str, raw: dict[str, Any], kinds: Mapping[str, Mapping[str, str]]) -> Module:
-    attributes = raw["attributes"]
-    black_box = any(_number(attributes.get(key, "0")) for key in ("blackbox", "whitebox"))
-    cells = tuple(_cell(cell, body, kinds) for cell, body in raw["cells"].items() if body["type"] not in IGNORED)
-    scopes = {
-        cell: str(body["attributes"].get("module", ""))
-        for cell, body in raw["cells"].items()
-        if body["type"] == "$scopeinfo" and body["parameters"].get("TYPE") == "module"
-    }
+@dataclass(frozen=True)
+class _Reader:
+    """Reads modules; knows the definition and the port directions of every module."""
+
+    definitions: Mapping[str, str]
+    directions: Mapping[str, Mapping[str, str]]
+
+    def module(self, name: str, raw: dict[str, Any]) -> Module:
+        attributes = raw["attributes"]
+        names, widths, init = _nets(raw)
+        return Module(
+            name,
+            self.definitions[name],
+            any(_parameter(attributes.get(key, "0")) for key in ("blackbox", "whitebox")),
+            {port: Port(body["direction"], tuple(body["bits"])) for port, body in raw["ports"].items()},
+            tuple(self._cell(cell, body) for cell, body in raw["cells"].items() if body["type"] not in IGNORED),
+            names,
+            widths,
+            init,
+            self._digest(name, raw),
+        )
+
+    def _cell(self, name: str, raw: dict[str, Any]) -> Cell:
+        kind = cast("str", raw["type"])
+        directions = raw.get("port_directions") or self.directions.get(kind, {})
+        inputs: dict[str, tuple[Bit, ...]] = {}
+        outputs: dict[str, tuple[Bit, ...]] = {}
+        for port, bits in raw["connections"].items():
+            direction = directions.get(port, "inout")
+            if direction != "output":
+                inputs[port] = tuple(bits)
+            if direction != "input":
+                outputs[port] = tuple(bits)
+        parameters = {key: _parameter(value) for key, value in raw["parameters"].items()}
+        return Cell(name, kind, self.definitions.get(kind, kind), parameters, inputs, outputs)
+
+    def _digest(self, name: str, raw: dict[str, Any]) -> str:
+        """Identify the structure: equal for instances of one definition whose netlists are the same."""
+        cells = [
+            (
+                cell if not body["hide_name"] else driven_variable(cell),
+                self.definitions.get(body["type"], body["type"]),
+                sorted(body["parameters"].items()),
+                sorted(body["connections"].items()),
+            )
+            for cell, body in raw["cells"].items()
+            if body["type"] not in IGNORED
+        ]
+        nets = [
+            (net if not body["hide_name"] else "", body["bits"], body["attributes"].get("init"), body.get("offset"))
+            for net, body in raw["netnames"].items()
+            if not body["hide_name"] or "init" in body["attributes"]
+        ]
+        ports = [(port, body["direction"], body["bits"]) for port, body in raw["ports"].items()]
+        text = json.dumps((self.definitions[name], ports, cells, nets), default=str)
+        return sha256(text.encode()).hexdigest()
+
+
+def _nets(raw: dict[str, Any]) -> tuple[dict[int, tuple[Name, ...]], dict[str, int], dict[int, str]]:
+    """Give the public names of each bit, the widths of the public nets, and the initial values."""
     names: dict[int, list[Name]] = {}
     widths: dict[str, int] = {}
     init: dict[int, str] = {}
     for net, body in raw["netnames"].items():
         bits = cast("list[Bit]", body["bits"])
         start = cast("str", body["attributes"].get("init", ""))
-        for place, value in enumerate(reversed(start)):
-            bit = bits[place] if place < len(bits) else "x"
-            if value in "01" and isinstance(bit, int):
-                init[bit] = value
+        init |= {b: v for b, v in zip(bits, reversed(start), strict=False) if v in "01" and isinstance(b, int)}
         if body["hide_name"]:
             continue
         widths[net] = len(bits)
@@ -161,24 +206,8 @@ def _module(name: str, raw: dict[str, Any], kinds: Mapping[str, Mapping[str, str
             if isinstance(bit, int):
                 index = offset + (len(bits) - 1 - place if upto else place)
                 names.setdefault(bit, []).append(Name(net, place, index))
-    ports = {port: Port(body["direction"], tuple(body["bits"])) for port, body in raw["ports"].items()}
-    frozen = {bit: tuple(sorted(found, key=lambda n: (len(n.variable), n.variable))) for bit, found in names.items()}
-    return Module(name, black_box, ports, cells, frozen, widths, init, scopes, _digest(name, raw))
-
-
-def _cell(name: str, raw: dict[str, Any], kinds: Mapping[str, Mapping[str, str]]) -> Cell:
-    kind = cast("str", raw["type"])
-    directions = raw.get("port_directions") or kinds.get(kind, {})
-    inputs: dict[str, tuple[Bit, ...]] = {}
-    outputs: dict[str, tuple[Bit, ...]] = {}
-    for port, bits in raw["connections"].items():
-        direction = directions.get(port, "inout")
-        if direction != "output":
-            inputs[port] = tuple(bits)
-        if direction != "input":
-            outputs[port] = tuple(bits)
-    parameters = {key: _parameter(value) for key, value in raw["parameters"].items()}
-    return Cell(name, kind, parameters, inputs, outputs)
+    # Short names first: a variable before the ports and copies that repeat it with a path.
+    return {b: tuple(sorted(n, key=lambda x: (len(x.variable), x.variable))) for b, n in names.items()}, widths, init
 
 
 def _parameter(value: object) -> int | str:
@@ -187,34 +216,7 @@ def _parameter(value: object) -> int | str:
     return int(text, 2) if text and not text.strip("01") else text
 
 
-def _number(value: object) -> int:
-    parameter = _parameter(value)
-    return parameter if isinstance(parameter, int) else 0
-
-
 def driven_variable(cell: str) -> str:
     """Take the variable out of the name that the engine gives a register's cell; empty without."""
     found = _DRIVER.match(cell)
     return found[1] if found else ""
-
-
-def _digest(name: str, raw: dict[str, Any]) -> str:
-    """Identify the structure: equal for instances of one definition whose netlists are the same."""
-    cells = [
-        (
-            cell if not body["hide_name"] else driven_variable(cell),
-            definition_of(body["type"]),
-            sorted(body["parameters"].items()),
-            sorted(body["connections"].items()),
-        )
-        for cell, body in raw["cells"].items()
-        if body["type"] not in IGNORED
-    ]
-    nets = [
-        (net if not body["hide_name"] else "", body["bits"], body["attributes"].get("init"), body.get("offset"))
-        for net, body in raw["netnames"].items()
-        if not body["hide_name"] or "init" in body["attributes"]
-    ]
-    ports = [(port, body["direction"], body["bits"]) for port, body in raw["ports"].items()]
-    text = json.dumps((definition_of(name), ports, cells, nets), default=str)
-    return sha256(text.encode()).hexdigest()

@@ -141,4 +141,5 @@ def _without_body(found: re.Match[bytes]) -> bytes:
 def _quoted(word: str) -> str:
     if _PLAIN.match(word):
         return word
-    return '"' + word.replace("\\", "\\\\").replace('"', '\\"') + '"'
+    # Single quotes keep everything, `$` included; a single quote itself needs double ones.
+    return '"\'"'.join(f"'{part}'" for part in word.split("'"))

@@ -131,7 +131,7 @@ class Comparison:
         if not below.fits:
             if len(below.cells) > 1:
                 return Fault(variable, "the cells on its clock pass different edges", "edge-mix")
-            edge = "rising" if below.cells[0].rising else "falling"
+            edge = "falling" if below.rising else "rising"
             return Fault(variable, f"the cell passes {edge} edges, the register changes at the other", "edge-mix")
         if above.root != below.root and not self._same(above.root, below.root):
             return Fault(variable, f"clock {self._named(below.root)} where the original has {self._named(above.root)}")
@@ -233,7 +233,7 @@ class Comparison:
                 continue
             if gold is None or gate is None:
                 self.faults.append(Fault(name, f"the instance stands only in the {'rewrite' if gate else 'original'}"))
-            elif _definition(gold) != _definition(gate) or _given(gold) != _given(gate):
+            elif gold.definition != gate.definition or gold.parameters != gate.parameters:
                 self.faults.append(Fault(name, "the instance has another definition or other parameters here"))
             else:
                 self._inputs(name, gold, gate)
@@ -277,11 +277,3 @@ def _constant_index(address: Word) -> str:
     if any(bit > TRUE for bit in address.value) or not address.surely_known:
         return ""
     return f"[{sum(bit << place for place, bit in enumerate(address.value))}]"
-
-
-def _definition(cell: Cell) -> str:
-    return cell.type.split("$", 1)[0]
-
-
-def _given(cell: Cell) -> dict[str, int | str]:
-    return dict(cell.parameters)

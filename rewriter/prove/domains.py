@@ -211,7 +211,7 @@ def _register(side: Side, source: Source) -> Register | None:
 
 
 def _ungated(side: Side, lit: Lit) -> Lit | None:
-    """See through a gate that was there before: a clock ANDed (or ORed) with a latch that is open in the other phase."""
+    """See through a gate that was there before: a clock ANDed (or ORed) with a latch that the clock itself opens."""
     aig = side.shared.aig
     operands = (aig.left[lit >> 1], aig.right[lit >> 1])
     for clock, other in (operands, operands[::-1]):

@@ -183,7 +183,7 @@ class _Liveness:
         by_variable: dict[int, tuple[object, ...]] = {}
         for key, register in side.by_key.items():
             by_variable[side.cone.bit(register.net)[0] >> 1] = key
-        roots = _sinks(side)
+        roots: list[Lit] = _sinks(side)
         seen: set[int] = set()
         while roots:
             fresh = [n for n in side.shared.aig.support(roots) if n in by_variable and n not in seen]

@@ -131,24 +131,15 @@ class Side:
         return Gating(cell.name, cell.type == RISING, *pins)
 
     def _collect(self) -> dict[int, Register | Source | tuple[Cell, str, int]]:
-        origins: dict[int, Register | Source | tuple[Cell, str, int]] = {}
-
-        def add(net: object, origin: Register | Source | tuple[Cell, str, int]) -> None:
-            if isinstance(net, int) and net not in self.contested:
-                origins[net] = origin
-
+        found: list[tuple[object, Register | Source | tuple[Cell, str, int]]] = [(r.net, r) for r in self.registers]
         for name, port in self.module.ports.items():
             if port.direction != "output":
-                for place, net in enumerate(port.bits):
-                    add(net, Source("port", name, "", place))
-        for register in self.registers:
-            add(register.net, register)
+                found += [(net, Source("port", name, "", place)) for place, net in enumerate(port.bits)]
         for cell in self.module.cells:
             if cell.is_instance or cell.type in ("$mem_v2", "$tribuf"):
                 for port, nets in cell.outputs.items():
-                    for place, net in enumerate(nets):
-                        add(net, (cell, port, place))
-        return origins
+                    found += [(net, (cell, port, place)) for place, net in enumerate(nets)]
+        return {net: origin for net, origin in found if isinstance(net, int) and net not in self.contested}
 
     def _leaf(self, net: int, cone: Cone) -> Bit:
         origin = self._origins.get(net)

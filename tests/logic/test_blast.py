@@ -64,7 +64,9 @@ def test_cells_mean_what_icarus_computes(tmp_path: Path) -> None:
     vectors += [dict.fromkeys(INPUTS, 0), {name: (1 << width) - 1 for name, width in INPUTS.items()}]
     text = design(found)
     rows = icarus(tmp_path, write(tmp_path, {"words.sv": text, "bench.sv": bench(found, vectors)})).split()
-    done = elaborate({"gold": RtlSource(("/w/words.sv",), texts=(SourceText("/w/words.sv", text.encode()),))}, "words", 60)
+    done = elaborate(
+        {"gold": RtlSource(("/w/words.sv",), texts=(SourceText("/w/words.sv", text.encode()),))}, "words", 60
+    )
     assert done.sides, done.message
     module = done.sides[0].modules["words"]
     aig = Aig()

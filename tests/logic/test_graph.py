@@ -116,7 +116,9 @@ def test_arithmetic_against_python(signed: bool) -> None:  # noqa: FBT001 (a par
 
     for x in range(1 << width):
         for y in range(1, 1 << width):
-            state = {lit >> 1: x >> i & 1 for i, lit in enumerate(a)} | {lit >> 1: y >> i & 1 for i, lit in enumerate(b)}
+            state = {lit >> 1: x >> i & 1 for i, lit in enumerate(a)} | {
+                lit >> 1: y >> i & 1 for i, lit in enumerate(b)
+            }
             m, n = number(x), number(y)
             truncated = abs(m) // abs(n) * (1 if (m < 0) == (n < 0) else -1)
             expected = {

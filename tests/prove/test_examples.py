@@ -18,10 +18,7 @@ endmodule
 
 
 def icg(name: str, wake: str, *, clock: str = "clk", test: str = "test_en", cell: str = "stillclock_icg") -> str:
-    return (
-        f"wire gclk_{name}; {cell} u_icg_{name} "
-        f"(.clk({clock}), .wake({wake}), .test({test}), .gclk(gclk_{name})); "
-    )
+    return f"wire gclk_{name}; {cell} u_icg_{name} (.clk({clock}), .wake({wake}), .test({test}), .gclk(gclk_{name})); "
 
 
 def test_enable() -> None:
