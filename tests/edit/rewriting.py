@@ -1,7 +1,6 @@
 """Rewrite small texts through the real front end, and compile the outcome."""
 
-from collections.abc import Sequence
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from pathlib import Path
 
 from rewriter import tools
@@ -11,9 +10,11 @@ from rewriter.frontend import elaborate, read
 from rewriter.methods.enable import ENABLE
 from rewriter.model.design import Design
 from rewriter.model.plan import Plan, Policy
-from rewriter.model.rewrite import Rewrite, TestPin
+from rewriter.model.rewrite import Rewrite
 from rewriter.model.source import SourceText
 from rewriter.plan import choose, settle
+
+DEFAULTS = EditOptions()
 
 
 @dataclass(frozen=True)
@@ -57,11 +58,9 @@ class Rewritten:
         assert not new, new
         out = self.folder / "out"
         out.mkdir(exist_ok=True)
-        names: list[str] = []
         for text in after.source.texts:
             (out / Path(text.path).name).write_bytes(text.data)
-        for path in after.source.files:
-            names.append(Path(path).name)  # noqa: PERF401 (reads better)
+        names = [Path(path).name for path in after.source.files]
         standard = "-g2005" if all(name.endswith(".v") for name in names) else "-g2012"
         flags = [standard, "-t", "null", "-s", self.design.top, *(f"-D{d}" for d in self.design.source.defines)]
         ran = tools.run("iverilog", [*flags, *names], folder=out, seconds=60)
@@ -69,20 +68,14 @@ class Rewritten:
 
 
 def rewrite_files(
-    folder: Path,
-    files: dict[str, str | bytes],
-    *arguments: str,
-    test_port: str = "test_en",
-    test_pins: Sequence[TestPin] = (),
-    min_bits: int = 1,
-    listed: Sequence[str] = (),
+    folder: Path, files: dict[str, str | bytes], *arguments: str, options: EditOptions = DEFAULTS, min_bits: int = 1
 ) -> Rewritten:
-    """Write files, read those that are listed (all without), and rewrite what the method `enable` finds."""
+    """Write files, read them, and rewrite what the method `enable` finds."""
     for name, text in files.items():
         (folder / name).write_bytes(text if isinstance(text, bytes) else text.encode())
-    design = read([*(listed or files), *arguments], str(folder))
+    design = read([*files, *arguments], str(folder))
     outcomes = [outcome for module in design.modules for outcome in ENABLE.propose(module, design)]
     plan = choose(settle(outcomes), Policy(min_bits=min_bits), {})
     scale = next((d.timescale for d in design.definitions.values() if d.timescale), None)
-    options = EditOptions(test_port, tuple(test_pins), render_cells(load_cell_map("behavioural"), scale))
-    return Rewritten(design, plan, edit(design, plan, options), folder)
+    cells = render_cells(load_cell_map("behavioural"), scale)
+    return Rewritten(design, plan, edit(design, plan, replace(options, cells=cells)), folder)

@@ -88,4 +88,6 @@ def test_the_diff_is_relative_and_complete(tmp_path: Path) -> None:
 def test_the_diff_says_the_same_as_difflib() -> None:
     old, new = "a\nb\nc\n", "a\nB\nc\nd\n"
     ours = unified_diff(a_rewrite(FileChange("/x/y.v", old.encode(), new.encode())))
-    assert ours == "".join(difflib.unified_diff(old.splitlines(True), new.splitlines(True), "a/y.v", "b/y.v"))
+    assert ours == "".join(
+        difflib.unified_diff(old.splitlines(keepends=True), new.splitlines(keepends=True), "a/y.v", "b/y.v")
+    )

@@ -22,9 +22,16 @@ def inside(done: Rewritten, name: str = "m.sv") -> str:
 
 def test_crlf_tabs_and_foreign_bytes_survive(tmp_path: Path) -> None:
     text = (
-        "// caf\u00e9\r\nmodule m (\r\n\tinput\twire\tclk, en,\r\n\tinput\twire [3:0]\td, // \u00e9tat\r\n"
-        "\toutput\treg [3:0]\tq // m\u00e9moire\r\n);\r\n\talways @(posedge clk) // \u00fcber\r\n"
-        "\t\tif (en)\r\n\t\t\tq <= d;\r\nendmodule\r\n"
+        "// caf\u00e9\r\n"
+        "module m (\r\n"
+        "\tinput\twire\tclk, en,\r\n"
+        "\tinput\twire [3:0]\td, // \u00e9tat\r\n"
+        "\toutput\treg [3:0]\tq // m\u00e9moire\r\n"
+        ");\r\n"
+        "\talways @(posedge clk) // \u00fcber\r\n"
+        "\t\tif (en)\r\n"
+        "\t\t\tq <= d;\r\n"
+        "endmodule\r\n"
     ).encode()
     done = rewrite_files(tmp_path, {"m.v": text})
     new = done.data("m.v")
@@ -32,8 +39,11 @@ def test_crlf_tabs_and_foreign_bytes_survive(tmp_path: Path) -> None:
     assert new.startswith("// caf\u00e9\r\n".encode())
     assert "\toutput\treg [3:0]\tq, // m\u00e9moire\r\n\tinput\twire\ttest_en\r\n);".encode() in new
     assert (
-        "\twire wake_q = en;\r\n\twire gclk_q;\r\n\tstillclock_icg u_icg_q (.clk(clk), .wake(wake_q), .test(test_en), "
-        ".gclk(gclk_q));\r\n\talways @(posedge gclk_q) // \u00fcber\r\n"
+        "\twire wake_q = en;\r\n"
+        "\twire gclk_q;\r\n"
+        "\tstillclock_icg u_icg_q (.clk(clk), .wake(wake_q), .test(test_en), "
+        ".gclk(gclk_q));\r\n"
+        "\talways @(posedge gclk_q) // \u00fcber\r\n"
     ).encode() in new
     done.compile()
 
@@ -48,7 +58,8 @@ def test_a_byte_order_mark_stays_first(tmp_path: Path) -> None:
 
 
 def test_latin_1_bytes_survive(tmp_path: Path) -> None:
-    text = b"module m (input clk, en, input [3:0] d, output reg [3:0] q); // \xe9\xe8*/\n" + (
+    text = (
+        b"module m (input clk, en, input [3:0] d, output reg [3:0] q); // \xe9\xe8*/\n"
         b"    always @(posedge clk) if (en /* \xe9tat */) q <= d; // \xff\nendmodule\n"
     )
     done = rewrite_files(tmp_path, {"m.v": text})
@@ -76,7 +87,8 @@ def test_two_blocks_on_one_line(tmp_path: Path) -> None:
     )
     assert inside(done).endswith(
         "    always_ff @(posedge gclk_q) if (en) q <= d; // stillclock: r sleeps unless it is written\n"
-        "    wire wake_r = go;\n    wire gclk_r;\n"
+        "    wire wake_r = go;\n"
+        "    wire gclk_r;\n"
         "    stillclock_icg u_icg_r (.clk(clk), .wake(wake_r), .test(test_en), .gclk(gclk_r));\n"
         "    always_ff @(posedge gclk_r) if (go) r <= d; // both"
     )
@@ -92,7 +104,14 @@ def test_attributes_stay_before_the_block(tmp_path: Path) -> None:
 
 
 def test_the_label_stays_with_what_stays(tmp_path: Path) -> None:
-    text = "    always_ff @(posedge clk) begin : pipe\n        n <= d;\n        if (en) begin : half\n            q <= d;\n        end : half\n    end : pipe"
+    text = (
+        "    always_ff @(posedge clk) begin : pipe\n"
+        "        n <= d;\n"
+        "        if (en) begin : half\n"
+        "            q <= d;\n"
+        "        end : half\n"
+        "    end : pipe"
+    )
     done = body_of(tmp_path, text)
     assert inside(done).startswith("    always_ff @(posedge clk) begin : pipe\n        n <= d;\n    end : pipe\n")
     assert inside(done).endswith(
@@ -115,13 +134,23 @@ def test_a_block_whose_banks_all_leave_is_replaced(tmp_path: Path) -> None:
 def test_temporaries_are_declared_where_they_are_needed(tmp_path: Path) -> None:
     done = body_of(
         tmp_path,
-        "    logic [7:0] sum;\n    assign r = 8'd0;\n    always_ff @(posedge clk) begin\n        sum = d + 8'd1;\n"
-        "        n <= sum;\n        if (en) q <= sum;\n    end",
+        (
+            "    logic [7:0] sum;\n"
+            "    assign r = 8'd0;\n"
+            "    always_ff @(posedge clk) begin\n"
+            "        sum = d + 8'd1;\n"
+            "        n <= sum;\n"
+            "        if (en) q <= sum;\n"
+            "    end"
+        ),
     )
     assert "        sum = d + 8'd1;\n        n <= sum;\n    end\n" in inside(done)
     assert inside(done).endswith(
-        "    always_ff @(posedge gclk_q) begin : q_copy\n        logic [7:0] sum_t;\n        sum_t = d + 8'd1;\n"
-        "        if (en) q <= sum_t;\n    end"
+        "    always_ff @(posedge gclk_q) begin : q_copy\n"
+        "        logic [7:0] sum_t;\n"
+        "        sum_t = d + 8'd1;\n"
+        "        if (en) q <= sum_t;\n"
+        "    end"
     )
     done.compile()
 
@@ -129,8 +158,15 @@ def test_temporaries_are_declared_where_they_are_needed(tmp_path: Path) -> None:
 def test_a_temporary_that_only_one_bank_needs_moves_with_it(tmp_path: Path) -> None:
     done = body_of(
         tmp_path,
-        "    logic [7:0] sum;\n    assign r = 8'd0;\n    always_ff @(posedge clk) begin\n        sum = d + 8'd1;\n"
-        "        n <= d;\n        if (en) q <= sum;\n    end",
+        (
+            "    logic [7:0] sum;\n"
+            "    assign r = 8'd0;\n"
+            "    always_ff @(posedge clk) begin\n"
+            "        sum = d + 8'd1;\n"
+            "        n <= d;\n"
+            "        if (en) q <= sum;\n"
+            "    end"
+        ),
     )
     assert "    always_ff @(posedge clk) begin\n        n <= d;\n    end\n" in inside(done)
     assert inside(done).endswith(
@@ -142,8 +178,14 @@ def test_a_temporary_that_only_one_bank_needs_moves_with_it(tmp_path: Path) -> N
 def test_a_temporary_that_others_may_read_stays(tmp_path: Path) -> None:
     done = body_of(
         tmp_path,
-        "    logic [7:0] sum;\n    assign r = sum;\n    always_ff @(posedge clk) begin\n        sum = d + 8'd1;\n"
-        "        if (en) q <= sum;\n    end",
+        (
+            "    logic [7:0] sum;\n"
+            "    assign r = sum;\n"
+            "    always_ff @(posedge clk) begin\n"
+            "        sum = d + 8'd1;\n"
+            "        if (en) q <= sum;\n"
+            "    end"
+        ),
     )
     assert "    always_ff @(posedge clk) begin\n        sum = d + 8'd1;\n    end\n" in inside(done)
     assert "logic [7:0] sum_t;" in inside(done)
@@ -153,15 +195,30 @@ def test_a_temporary_that_others_may_read_stays(tmp_path: Path) -> None:
 def test_local_declarations_come_along(tmp_path: Path) -> None:
     done = body_of(
         tmp_path,
-        "    always_ff @(posedge clk) begin : work\n        logic [7:0] sum, unused;\n        logic [7:0] other;\n"
-        "        sum = d + 8'd1;\n        other = ~d;\n        n <= other;\n        if (en) q <= sum;\n    end",
+        (
+            "    always_ff @(posedge clk) begin : work\n"
+            "        logic [7:0] sum, unused;\n"
+            "        logic [7:0] other;\n"
+            "        sum = d + 8'd1;\n"
+            "        other = ~d;\n"
+            "        n <= other;\n"
+            "        if (en) q <= sum;\n"
+            "    end"
+        ),
     )
     assert inside(done).startswith(
-        "    always_ff @(posedge clk) begin : work\n        logic [7:0] other;\n        other = ~d;\n        n <= other;\n    end\n"
+        "    always_ff @(posedge clk) begin : work\n"
+        "        logic [7:0] other;\n"
+        "        other = ~d;\n"
+        "        n <= other;\n"
+        "    end\n"
     )
     assert inside(done).endswith(
-        "    always_ff @(posedge gclk_q) begin : work_q\n        logic [7:0] sum, unused;\n        sum = d + 8'd1;\n"
-        "        if (en) q <= sum;\n    end"
+        "    always_ff @(posedge gclk_q) begin : work_q\n"
+        "        logic [7:0] sum, unused;\n"
+        "        sum = d + 8'd1;\n"
+        "        if (en) q <= sum;\n"
+        "    end"
     )
     done.compile()
 
@@ -169,15 +226,27 @@ def test_local_declarations_come_along(tmp_path: Path) -> None:
 def test_promises_about_all_branches_go_where_a_branch_goes(tmp_path: Path) -> None:
     # Yosys 0.70 drops an empty item under parallel_case, so that its values fall into the default (tried by hand).
     text = (
-        "module m (input clk, input [7:0] d, output reg [7:0] q, output reg p);\n    always @(posedge clk)\n"
-        "        (* full_case, parallel_case *)\n        case (d[1:0])\n            2'd0: p <= d[7];\n            2'd1: q <= d;\n"
-        "            2'd2: begin p <= d[6]; q <= ~d; end\n            default: p <= 1'b0;\n        endcase\nendmodule\n"
+        "module m (input clk, input [7:0] d, output reg [7:0] q, output reg p);\n"
+        "    always @(posedge clk)\n"
+        "        (* full_case, parallel_case *)\n"
+        "        case (d[1:0])\n"
+        "            2'd0: p <= d[7];\n"
+        "            2'd1: q <= d;\n"
+        "            2'd2: begin p <= d[6]; q <= ~d; end\n"
+        "            default: p <= 1'b0;\n"
+        "        endcase\n"
+        "endmodule\n"
     )
     done = rewrite_files(tmp_path, {"m.v": text}, min_bits=8)
     rest, _, copy = inside(done, "m.v").partition("endcase\n")
     assert rest == (
-        "    always @(posedge clk)\n        case (d[1:0])\n            2'd0: p <= d[7];\n            2'd1: ;\n"
-        "            2'd2: begin p <= d[6]; end\n            default: p <= 1'b0;\n        "
+        "    always @(posedge clk)\n"
+        "        case (d[1:0])\n"
+        "            2'd0: p <= d[7];\n"
+        "            2'd1: ;\n"
+        "            2'd2: begin p <= d[6]; end\n"
+        "            default: p <= 1'b0;\n"
+        "        "
     )
     assert "full_case" not in copy
     done.compile()
@@ -185,12 +254,21 @@ def test_promises_about_all_branches_go_where_a_branch_goes(tmp_path: Path) -> N
 
 def test_an_else_keeps_its_if(tmp_path: Path) -> None:
     text = (
-        "module m (input clk, rst, en, input [7:0] d, output reg [7:0] q, output reg p);\n    always @(posedge clk)\n"
-        "        if (rst)\n            if (en) p <= d[7];\n            else q <= d;\n        else p <= d[6];\nendmodule\n"
+        "module m (input clk, rst, en, input [7:0] d, output reg [7:0] q, output reg p);\n"
+        "    always @(posedge clk)\n"
+        "        if (rst)\n"
+        "            if (en) p <= d[7];\n"
+        "            else q <= d;\n"
+        "        else p <= d[6];\n"
+        "endmodule\n"
     )
     done = rewrite_files(tmp_path, {"m.v": text}, min_bits=8)
     assert inside(done, "m.v").startswith(
-        "    always @(posedge clk)\n        if (rst)\n            if (en) p <= d[7];\n            else ;\n        else p <= d[6];\n"
+        "    always @(posedge clk)\n"
+        "        if (rst)\n"
+        "            if (en) p <= d[7];\n"
+        "            else ;\n"
+        "        else p <= d[6];\n"
     )
     done.compile()
 
@@ -198,14 +276,22 @@ def test_an_else_keeps_its_if(tmp_path: Path) -> None:
 @pytest.mark.parametrize("suffix", ["sv", "v"])
 def test_a_lone_block_of_a_generate_branch_is_wrapped(tmp_path: Path, suffix: str) -> None:
     text = (
-        "module m #(parameter FAST = 1) (input clk, en, input [7:0] d, output reg [7:0] q);\n    generate\n"
-        "        if (FAST)\n            always @(posedge clk) begin if (en) q <= d; end // fast\n"
-        "        else\n            always @(posedge clk) q <= ~d;\n    endgenerate\nendmodule\n"
+        "module m #(parameter FAST = 1) (input clk, en, input [7:0] d, output reg [7:0] q);\n"
+        "    generate\n"
+        "        if (FAST)\n"
+        "            always @(posedge clk) begin if (en) q <= d; end // fast\n"
+        "        else\n"
+        "            always @(posedge clk) q <= ~d;\n"
+        "    endgenerate\n"
+        "endmodule\n"
     )
     done = rewrite_files(tmp_path, {f"m.{suffix}": text})
     assert (
-        "        if (FAST)\n            begin\n            // stillclock: q sleeps unless it is written\n"
-        "            wire wake_q = en;\n            wire gclk_q;\n"
+        "        if (FAST)\n"
+        "            begin\n"
+        "            // stillclock: q sleeps unless it is written\n"
+        "            wire wake_q = en;\n"
+        "            wire gclk_q;\n"
     ) in done.text(f"m.{suffix}")
     assert "begin if (en) q <= d; end // fast\n            end\n        else\n" in done.text(f"m.{suffix}")
     done.compile()
@@ -221,7 +307,8 @@ def test_names_avoid_what_is_there(tmp_path: Path) -> None:
 def test_escaped_names(tmp_path: Path) -> None:
     text = (
         "module m (input \\clk+1 , \\en! , input [7:0] d, output reg [7:0] \\q:0 );\n"
-        "    always @(posedge \\clk+1 ) if (\\en! ) \\q:0 <= d;\nendmodule\n"
+        "    always @(posedge \\clk+1 ) if (\\en! ) \\q:0 <= d;\n"
+        "endmodule\n"
     )
     done = rewrite_files(tmp_path, {"m.v": text})
     assert "wire wake_q_0 = \\en! ;" in done.text("m.v")
@@ -233,7 +320,11 @@ def test_escaped_names(tmp_path: Path) -> None:
 def test_banks_of_one_condition_share_a_cell(tmp_path: Path) -> None:
     done = body_of(
         tmp_path,
-        "    always_ff @(posedge clk) if (en) q <= d;\n    assign n = d;\n    always_ff @(posedge clk) if (en) r <= ~d;",
+        (
+            "    always_ff @(posedge clk) if (en) q <= d;\n"
+            "    assign n = d;\n"
+            "    always_ff @(posedge clk) if (en) r <= ~d;"
+        ),
     )
     assert "// stillclock: q and r sleep unless they are written\n" in inside(done)
     assert inside(done).count("stillclock_icg ") == 1
@@ -250,8 +341,13 @@ def test_an_include_file_that_is_read_once_is_edited(tmp_path: Path) -> None:
 
 def test_macro_text_stays_with_what_stays(tmp_path: Path) -> None:
     body = (
-        "    always_ff @(posedge clk) begin\n        n <= d;\n        if (en) begin\n            `trace(d)\n"
-        "            q <= d;\n        end\n    end"
+        "    always_ff @(posedge clk) begin\n"
+        "        n <= d;\n"
+        "        if (en) begin\n"
+        "            `trace(d)\n"
+        "            q <= d;\n"
+        "        end\n"
+        "    end"
     )
     done = rewrite_files(tmp_path, {"m.sv": f"`define trace(x)\n{HEAD}{body}\nendmodule\n"})
     assert "        if (en) begin\n            `trace(d)\n        end\n    end\n    // stillclock" in done.text("m.sv")
@@ -262,11 +358,22 @@ def test_macro_text_stays_with_what_stays(tmp_path: Path) -> None:
 def test_a_loop_is_copied_with_its_variable(tmp_path: Path) -> None:
     done = body_of(
         tmp_path,
-        "    integer i;\n    always @(posedge clk) begin\n        n <= d;\n        for (i = 0; i < 8; i = i + 1)\n"
-        "            if (d[i]) q[i] <= en;\n    end",
+        (
+            "    integer i;\n"
+            "    always @(posedge clk) begin\n"
+            "        n <= d;\n"
+            "        for (i = 0; i < 8; i = i + 1)\n"
+            "            if (d[i]) q[i] <= en;\n"
+            "    end"
+        ),
     )
     assert (
-        "    always_comb begin\n        wake_q = 1'b0;\n        for (i = 0; i < 8; i = i + 1)\n            if (d[i]) wake_q = 1'b1;\n"
+        (
+            "    always_comb begin\n"
+            "        wake_q = 1'b0;\n"
+            "        for (i = 0; i < 8; i = i + 1)\n"
+            "            if (d[i]) wake_q = 1'b1;\n"
+        )
         in inside(done)
     ) or ("integer i_t;" in inside(done))
     done.compile()

@@ -4,6 +4,7 @@ from pathlib import Path
 
 import pytest
 
+from rewriter.edit import EditOptions
 from rewriter.model.errors import UserError
 from rewriter.model.rewrite import TestPin
 from tests.edit.rewriting import Rewritten, rewrite_files
@@ -16,7 +17,7 @@ endmodule
 
 
 def done_with(folder: Path, top: str, *arguments: str, leaf: str = LEAF, pins: tuple[TestPin, ...] = ()) -> Rewritten:
-    return rewrite_files(folder, {"leaf.v": leaf, "top.sv": top}, *arguments, test_pins=pins)
+    return rewrite_files(folder, {"leaf.v": leaf, "top.sv": top}, *arguments, options=EditOptions(test_pins=pins))
 
 
 PORTS = {
@@ -25,31 +26,85 @@ PORTS = {
         "module leaf (input clk, input en, input [3:0] d, output reg [3:0] q, input wire test_en);",
     ),
     "in columns": (
-        "module leaf (\n  input  wire       clk, en,\n  input  wire [3:0] d, // data\n  output reg  [3:0] q  // held\n);",
-        "module leaf (\n  input  wire       clk, en,\n  input  wire [3:0] d, // data\n  output reg  [3:0] q,  // held\n"
-        "  input  wire       test_en\n);",
+        (
+            "module leaf (\n"
+            "  input  wire       clk, en,\n"
+            "  input  wire [3:0] d, // data\n"
+            "  output reg  [3:0] q  // held\n"
+            ");"
+        ),
+        (
+            "module leaf (\n"
+            "  input  wire       clk, en,\n"
+            "  input  wire [3:0] d, // data\n"
+            "  output reg  [3:0] q,  // held\n"
+            "  input  wire       test_en\n"
+            ");"
+        ),
     ),
     "tabs": (
         "module leaf (\n\tinput\twire\t\tclk, en,\n\tinput\twire [3:0]\td,\n\toutput\treg [3:0]\tq\n);",
-        "module leaf (\n\tinput\twire\t\tclk, en,\n\tinput\twire [3:0]\td,\n\toutput\treg [3:0]\tq,\n\tinput\twire\ttest_en\n);",
+        (
+            "module leaf (\n"
+            "\tinput\twire\t\tclk, en,\n"
+            "\tinput\twire [3:0]\td,\n"
+            "\toutput\treg [3:0]\tq,\n"
+            "\tinput\twire\ttest_en\n"
+            ");"
+        ),
     ),
     "comma first": (
         "module leaf (\n    input clk\n  , input en\n  , input [3:0] d\n  , output reg [3:0] q\n);",
-        "module leaf (\n    input clk\n  , input en\n  , input [3:0] d\n  , output reg [3:0] q\n  , input wire test_en\n);",
+        (
+            "module leaf (\n"
+            "    input clk\n"
+            "  , input en\n"
+            "  , input [3:0] d\n"
+            "  , output reg [3:0] q\n"
+            "  , input wire test_en\n"
+            ");"
+        ),
     ),
     "bracket on the last line": (
         "module leaf (input clk, input en,\n             input [3:0] d, output reg [3:0] q /* held */);",
-        "module leaf (input clk, input en,\n             input [3:0] d, output reg [3:0] q, input wire test_en /* held */);",
+        (
+            "module leaf (input clk, input en,\n"
+            "             input [3:0] d, output reg [3:0] q, input wire test_en /* held */);"
+        ),
     ),
     "comment over two lines": (
         "module leaf (\n    input clk, en,\n    input [3:0] d,\n    output reg [3:0] q /* held\n    always */\n);",
-        "module leaf (\n    input clk, en,\n    input [3:0] d,\n    output reg [3:0] q, input wire test_en /* held\n"
-        "    always */\n);",
+        (
+            "module leaf (\n"
+            "    input clk, en,\n"
+            "    input [3:0] d,\n"
+            "    output reg [3:0] q, input wire test_en /* held\n"
+            "    always */\n"
+            ");"
+        ),
     ),
     "directive among the ports": (
-        "module leaf (\n    input clk, en,\n    input [3:0] d,\n    output reg [3:0] q\n`ifdef PROBE\n    , output p\n`endif\n);",
-        "module leaf (\n    input wire test_en,\n    input clk, en,\n    input [3:0] d,\n    output reg [3:0] q\n"
-        "`ifdef PROBE\n    , output p\n`endif\n);",
+        (
+            "module leaf (\n"
+            "    input clk, en,\n"
+            "    input [3:0] d,\n"
+            "    output reg [3:0] q\n"
+            "`ifdef PROBE\n"
+            "    , output p\n"
+            "`endif\n"
+            ");"
+        ),
+        (
+            "module leaf (\n"
+            "    input wire test_en,\n"
+            "    input clk, en,\n"
+            "    input [3:0] d,\n"
+            "    output reg [3:0] q\n"
+            "`ifdef PROBE\n"
+            "    , output p\n"
+            "`endif\n"
+            ");"
+        ),
     ),
     "parameters and an import-free header": (
         "module leaf #(parameter P = 1) (input clk, input en, input [3:0] d, output reg [3:0] q);",
@@ -57,18 +112,65 @@ PORTS = {
     ),
     "names alone": (
         "module leaf (clk, en, d, q);\n    input clk, en;\n    input [3:0] d;\n    output reg [3:0] q;",
-        "module leaf (clk, en, d, q, test_en);\n    input wire test_en;\n    input clk, en;\n    input [3:0] d;\n"
-        "    output reg [3:0] q;",
+        (
+            "module leaf (clk, en, d, q, test_en);\n"
+            "    input wire test_en;\n"
+            "    input clk, en;\n"
+            "    input [3:0] d;\n"
+            "    output reg [3:0] q;"
+        ),
     ),
     "names alone, one a line": (
-        "module leaf (\n  clk,\n  en,\n  d,\n  q // held\n); // a leaf\n  input clk, en;\n  input [3:0] d;\n  output reg [3:0] q;",
-        "module leaf (\n  clk,\n  en,\n  d,\n  q,\n  test_en // held\n); // a leaf\n  input wire test_en;\n  input clk, en;\n"
-        "  input [3:0] d;\n  output reg [3:0] q;",
+        (
+            "module leaf (\n"
+            "  clk,\n"
+            "  en,\n"
+            "  d,\n"
+            "  q // held\n"
+            "); // a leaf\n"
+            "  input clk, en;\n"
+            "  input [3:0] d;\n"
+            "  output reg [3:0] q;"
+        ),
+        (
+            "module leaf (\n"
+            "  clk,\n"
+            "  en,\n"
+            "  d,\n"
+            "  q,\n"
+            "  test_en // held\n"
+            "); // a leaf\n"
+            "  input wire test_en;\n"
+            "  input clk, en;\n"
+            "  input [3:0] d;\n"
+            "  output reg [3:0] q;"
+        ),
     ),
     "names and a directive": (
-        "module leaf (\n  clk, en, d, q\n`ifdef PROBE\n  , p\n`endif\n);\n  input clk, en;\n  input [3:0] d;\n  output reg [3:0] q;",
-        "module leaf (\n  test_en,\n  clk, en, d, q\n`ifdef PROBE\n  , p\n`endif\n);\n  input wire test_en;\n"
-        "  input clk, en;\n  input [3:0] d;\n  output reg [3:0] q;",
+        (
+            "module leaf (\n"
+            "  clk, en, d, q\n"
+            "`ifdef PROBE\n"
+            "  , p\n"
+            "`endif\n"
+            ");\n"
+            "  input clk, en;\n"
+            "  input [3:0] d;\n"
+            "  output reg [3:0] q;"
+        ),
+        (
+            "module leaf (\n"
+            "  test_en,\n"
+            "  clk, en, d, q\n"
+            "`ifdef PROBE\n"
+            "  , p\n"
+            "`endif\n"
+            ");\n"
+            "  input wire test_en;\n"
+            "  input clk, en;\n"
+            "  input [3:0] d;\n"
+            "  output reg [3:0] q;"
+        ),
     ),
 }
 
@@ -78,7 +180,11 @@ PORTS = {
 def test_port_styles(tmp_path: Path, style: str) -> None:
     before, after = PORTS[style]
     rest = "\n    always @(posedge clk) if (en) q <= d;\nendmodule\n"
-    top = "module top (input clk, en, input [3:0] d, output [3:0] q);\n    leaf u (.clk(clk), .en(en), .d(d), .q(q));\nendmodule\n"
+    top = (
+        "module top (input clk, en, input [3:0] d, output [3:0] q);\n"
+        "    leaf u (.clk(clk), .en(en), .d(d), .q(q));\n"
+        "endmodule\n"
+    )
     done = done_with(tmp_path, top, leaf=before + rest)
     assert done.text("leaf.v").startswith(after + "\n")
     done.compile()
@@ -104,7 +210,15 @@ CONNECTIONS = {
     ),
     "named, one a line": (
         "leaf u (\n        .clk (clk),\n        .en  (en),\n        .d   (d),\n        .q   (q)\n    );",
-        "leaf u (\n        .test_en(test_en),\n        .clk (clk),\n        .en  (en),\n        .d   (d),\n        .q   (q)\n    );",
+        (
+            "leaf u (\n"
+            "        .test_en(test_en),\n"
+            "        .clk (clk),\n"
+            "        .en  (en),\n"
+            "        .d   (d),\n"
+            "        .q   (q)\n"
+            "    );"
+        ),
     ),
     "implicit named": ("leaf u (.clk, .en, .d, .q);", "leaf u (.test_en(test_en), .clk, .en, .d, .q);"),
     "ordered": ("leaf u (clk, en, d, q);", "leaf u (clk, en, d, q, test_en);"),
@@ -136,7 +250,10 @@ CONNECTIONS = {
     ),
     "untaken branch": (
         "leaf u (clk, en, d, q);\n    generate if (0) begin : off leaf w (clk, en, d, ); end endgenerate",
-        "leaf u (clk, en, d, q, test_en);\n    generate if (0) begin : off leaf w (clk, en, d, , test_en); end endgenerate",
+        (
+            "leaf u (clk, en, d, q, test_en);\n"
+            "    generate if (0) begin : off leaf w (clk, en, d, , test_en); end endgenerate"
+        ),
     ),
 }
 
@@ -185,9 +302,12 @@ def test_a_named_pin_is_used_instead_of_a_port(tmp_path: Path, *, low: bool, val
 def test_a_pin_of_the_module_with_the_cells(tmp_path: Path) -> None:
     top = (
         "module top (input clk, en, tm_n, input [3:0] d, output reg [3:0] q);\n"
-        "    always @(posedge clk) if (en) q <= d;\nendmodule\n"
+        "    always @(posedge clk) if (en) q <= d;\n"
+        "endmodule\n"
     )
-    done = rewrite_files(tmp_path, {"top.v": top}, test_pins=[TestPin("top", "tm_n", "test-mode", active_low=True)])
+    done = rewrite_files(
+        tmp_path, {"top.v": top}, options=EditOptions(test_pins=(TestPin("top", "tm_n", "test-mode", active_low=True),))
+    )
     assert ".test(!tm_n)" in done.text("top.v")
     assert "test_en" not in done.text("top.v")
     done.compile()
@@ -202,14 +322,14 @@ def test_a_pin_of_the_module_with_the_cells(tmp_path: Path) -> None:
 )
 def test_unknown_pins(tmp_path: Path, pin: TestPin, message: str, way_out: str) -> None:
     with pytest.raises(UserError, match=message) as caught:
-        rewrite_files(tmp_path, {"leaf.v": LEAF}, test_pins=[pin])
+        rewrite_files(tmp_path, {"leaf.v": LEAF}, options=EditOptions(test_pins=(pin,)))
     assert caught.value.help == way_out
 
 
 @pytest.mark.parametrize("name", ["2nd", "test en", "always", ""])
 def test_impossible_port_names(tmp_path: Path, name: str) -> None:
     with pytest.raises(UserError, match="cannot name a port"):
-        rewrite_files(tmp_path, {"leaf.v": LEAF}, test_port=name)
+        rewrite_files(tmp_path, {"leaf.v": LEAF}, options=EditOptions(test_port=name))
 
 
 @pytest.mark.simulator
@@ -229,8 +349,14 @@ BLOCKED = {
         "no-test-path",
     ),
     "a bound instance": (
-        "module top (input clk, en, input [3:0] d);\nendmodule\n"
-        "module binder (input clk, en, input [3:0] d);\n    top t (.*);\n    bind top leaf u (.clk, .en, .d, .q());\nendmodule\n",
+        (
+            "module top (input clk, en, input [3:0] d);\n"
+            "endmodule\n"
+            "module binder (input clk, en, input [3:0] d);\n"
+            "    top t (.*);\n"
+            "    bind top leaf u (.clk, .en, .d, .q());\n"
+            "endmodule\n"
+        ),
         "bind",
     ),
     "bound at the top level": (
@@ -238,8 +364,16 @@ BLOCKED = {
         "bind",
     ),
     "a cell of the library above": (
-        "`celldefine\nmodule mid (input clk, en, input [3:0] d, output [3:0] q);\n    leaf u (.*);\nendmodule\n`endcelldefine\n"
-        "module top (input clk, en, input [3:0] d, output [3:0] q);\n    mid m (.*);\nendmodule\n",
+        (
+            "`celldefine\n"
+            "module mid (input clk, en, input [3:0] d, output [3:0] q);\n"
+            "    leaf u (.*);\n"
+            "endmodule\n"
+            "`endcelldefine\n"
+            "module top (input clk, en, input [3:0] d, output [3:0] q);\n"
+            "    mid m (.*);\n"
+            "endmodule\n"
+        ),
         "celldefine",
     ),
 }
