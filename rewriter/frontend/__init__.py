@@ -7,7 +7,6 @@ from collections.abc import Generator, Sequence
 from contextlib import contextmanager
 
 from rewriter.frontend.bodies import Body, by_definition, collect
-from rewriter.frontend.census import count
 from rewriter.frontend.clocking import EventPorts
 from rewriter.frontend.declarations import Declarations
 from rewriter.frontend.definitions import Definitions
@@ -65,7 +64,6 @@ def _lower(elaboration: Elaboration) -> Design:
         elaboration, texts, EventPorts(bodies), Declarations(elaboration.compilation, elaboration.locator, texts),
         LazyDrivers(elaboration, elaboration.analysis, elaboration.locator), _outside_references(bodies))
     modules = tuple(lowering.module(body) for body in bodies.values())
-    counts = [(count(module), len(module.instances)) for module in modules]
     boxes = {box.definitionName: box for body in bodies.values() for box in body.unknown}
     warnings = tuple(
         Warning(f"module {name} is unknown and stays a black box", elaboration.place(box.location),
@@ -75,8 +73,7 @@ def _lower(elaboration: Elaboration) -> Design:
         source=elaboration.with_tops(tops), top=",".join(tops), modules=modules,
         definitions=Definitions(elaboration, texts, by_definition(bodies)).all(), black_boxes=tuple(boxes),
         drivers=lowering.drivers, warnings=elaboration.warnings + warnings,
-        flop_bits=sum(flops * times for (flops, _), times in counts),
-        array_bits=sum(arrays * times for (_, arrays), times in counts))
+        flop_bits=lowering.flop_bits, array_bits=lowering.array_bits)
 
 
 def _outside_references(bodies: dict[str, Body]) -> dict[str, frozenset[str]]:

@@ -18,11 +18,13 @@ from pyslang.ast import (
 
 from rewriter.frontend.blocks import is_clocked, lower_block
 from rewriter.frontend.bodies import Body
+from rewriter.frontend.census import blocking_only, count
 from rewriter.frontend.clocking import EventPorts, clock_drivers, data_uses
 from rewriter.frontend.declarations import Declarations
 from rewriter.frontend.drivers import LazyDrivers, writers_of
 from rewriter.frontend.elaboration import Elaboration
 from rewriter.frontend.expressions import Expressions
+from rewriter.frontend.mentions import shared_symbols
 from rewriter.frontend.names import Names, is_parameter
 from rewriter.model.design import ClockedBlock, Module
 from rewriter.model.source import Span
@@ -39,9 +41,11 @@ class Lowering:
     declarations: Declarations
     drivers: LazyDrivers
     outside: dict[str, frozenset[str]]
+    flop_bits: int = 0
+    array_bits: int = 0
 
     def module(self, body: Body) -> Module:
-        """Lower one canonical body."""
+        """Lower one canonical body, and count its bits for every instance of it."""
         symbol = body.symbol
         locator = self.elaboration.locator
         names = Names(symbol)
@@ -54,7 +58,7 @@ class Lowering:
         in_ports = {port.internalSymbol for port in symbol.portList if isinstance(port, PortSymbol)
                     and port.internalSymbol is not None}
         analysis = self.elaboration.analysis
-        return Module(
+        module = Module(
             key=body.key, definition=symbol.definition.name, instances=tuple(body.instances),
             parameters=tuple(_parameters(symbol)), blocks=blocks,
             variables={path: self.declarations.variable(s, path, is_port=s in in_ports) for path, s in values.items()},
@@ -62,6 +66,18 @@ class Lowering:
             clock_uses=self._clock_uses(body, blocks, names),
             drives_clocks=self._drives_clocks(body, clocked, written, names),
             external_references=self.outside.get(body.key, frozenset()))
+        flops, arrays = count(module, self._read_outside(body, module, names))
+        self.flop_bits += flops * len(body.instances)
+        self.array_bits += arrays * len(body.instances)
+        return module
+
+    def _read_outside(self, body: Body, module: Module, names: Names) -> frozenset[str]:
+        """Find variables that a clocked block writes with `=` alone, and that are used elsewhere as well."""
+        candidates = frozenset[str]().union(*map(blocking_only, module.blocks)) & module.variables.keys()
+        if not candidates:
+            return candidates
+        shared = {names.path(symbol) for symbol in shared_symbols(body)}
+        return frozenset(path for path in candidates if path in shared or module.variables[path].is_port)
 
     def _clock_uses(self, body: Body, blocks: tuple[ClockedBlock, ...], names: Names) -> dict[str, Span]:
         clocks: dict[Symbol, str] = {}

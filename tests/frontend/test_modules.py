@@ -136,3 +136,25 @@ def test_names_used_from_outside_are_found(sample: Reader) -> None:
                    "module m(input clk, output o, p); leaf u(clk), v(clk); assign o = u.h; assign p = m.v.b.t; "
                    "endmodule")
     assert found.module("leaf").external_references == {"h", "b.t"}
+
+
+def test_bits_that_count(sample: Reader) -> None:
+    def bits(text: str) -> tuple[int, int]:
+        found = sample("module m(input clk, en, input [3:0] d, output reg [3:0] q, output [3:0] o);\n"
+                       f"reg [3:0] r, t; reg [7:0] mem [0:3]; integer i; {text} endmodule")
+        return found.design.flop_bits, found.design.array_bits
+
+    assert bits("always @(posedge clk) q <= d;") == (4, 0)
+    assert bits("always @(posedge clk) q[1:0] <= d;") == (2, 0)
+    assert bits("always @(posedge clk) mem[d] <= d;") == (0, 32)
+    assert bits("always @(posedge clk) mem[2] <= d;") == (8, 0)
+    assert bits("always @(posedge clk) if (0) q <= d; else r <= d;") == (4, 0)
+    assert bits("always @(posedge clk) for (i = 0; i < 2; i = i + 1) q[i] <= d[i];") == (4, 0)  # may write all four
+    assert bits("always @(posedge clk) begin t = d; q <= t; end") == (4, 0)  # t is a temporary
+    assert bits("always @(posedge clk) begin if (en) t = d; q <= t; end") == (8, 0)  # t keeps its value
+    assert bits("always @(posedge clk) begin case (d) 0: t = 1; default: t = 2; endcase q <= t; end") == (4, 0)
+    assert bits("always @(posedge clk) begin q <= t; t = d; end") == (8, 0)
+    assert bits("always @(posedge clk) q = d;") == (4, 0)
+    assert bits("always @(posedge clk) r = d; assign o = r;") == (4, 0)
+    assert bits("always @(posedge clk) r = d; always @* q = r;") == (4, 0)
+    assert bits("always @(posedge clk) t = t + 1;") == (4, 0)
