@@ -3,7 +3,7 @@
 import os
 import re
 from collections.abc import Iterator, Mapping, Sequence
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from pathlib import Path
 
 from rewriter.model.errors import Place, UserError
@@ -40,14 +40,17 @@ def _expand(words: Sequence[Word], open_lists: tuple[str, ...]) -> Iterator[Word
     position = 0
     while position < len(words):
         word = words[position]
-        if word.text not in _LISTS:
+        position += 1
+        flag, name = word.text[:2], word.text[2:].removeprefix("=")
+        if flag not in _LISTS:
             yield word
-            position += 1
             continue
-        if position + 1 == len(words):
-            raise word.error(f"{word.text} needs the name of a file list", "write `-f LIST`")
-        yield from _open_list(words[position + 1], relative=_LISTS[word.text], open_lists=open_lists)
-        position += 2
+        if not name:
+            if position == len(words):
+                raise word.error(f"{word.text} needs the name of a file list", "write `-f LIST`")
+            word, name = words[position], words[position].text
+            position += 1
+        yield from _open_list(replace(word, text=name), relative=_LISTS[flag], open_lists=open_lists)
 
 
 def _open_list(word: Word, *, relative: bool, open_lists: tuple[str, ...]) -> Iterator[Word]:

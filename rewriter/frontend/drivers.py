@@ -82,11 +82,11 @@ class LazyDrivers:
     """Implement `Drivers`; it keeps the elaboration alive through what it holds."""
 
     def __init__(self, owner: object, analysis: AnalysisManager, locator: Locator) -> None:
-        self._owner = owner
-        self._analysis = analysis
-        self._locator = locator
         self._bodies: dict[str, Expressions] = {}
         self._known: dict[tuple[str, str], tuple[Driver, ...]] = {}
+        self._locator = locator
+        self._analysis = analysis
+        self._owner = owner  # last, for attributes are dropped in order
 
     def add(self, body: str, expressions: Expressions) -> None:
         """Make a body known."""

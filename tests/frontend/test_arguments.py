@@ -56,6 +56,7 @@ def test_paths_start_from_the_list_only_with_a_capital_letter(tree: Path) -> Non
     (tree / "lists" / "cwd.f").write_text("rtl/m.sv\n+incdir+inc\n")
     assert read(["-F", "lists/rel.f"], str(tree)).flop_bits == 4
     assert read(["-f", "lists/cwd.f"], str(tree)).flop_bits == 4
+    assert read(["-flists/cwd.f"], str(tree)).flop_bits == 4
 
 
 def test_quotes_of_parameters_survive(tree: Path) -> None:
