@@ -48,7 +48,9 @@ def split_events(events: tuple[Event, ...], body: Statement) -> Split:
 
 
 def _leading_if(statement: Statement | None) -> If | None:
-    while isinstance(statement, Block) and len(statement.body) == 1 and not statement.declarations:
+    while isinstance(statement, Block) and len(statement.body) == 1:
+        if any(declaration.initial for declaration in statement.declarations):
+            return None
         statement = statement.body[0]
     return statement if isinstance(statement, If) else None
 

@@ -48,6 +48,15 @@ def test_two_resets_in_a_chain_and_in_one_test(sample: Reader) -> None:
         assert found.text(found.block.synchronous.span) == "q <= d;"
 
 
+def test_a_declaration_may_stand_before_the_reset(sample: Reader) -> None:
+    found = block(sample, "always @(posedge clk or negedge rst_n) begin : b integer i; if (!rst_n) q <= 0; else\n"
+                          "for (i = 0; i < 4; i = i + 1) q[i] <= d[i]; end")
+    assert len(found.block.resets) == 1
+    other = block(sample, "always @(posedge clk or negedge rst_n) begin : b automatic int i = d; if (!rst_n) q <= 0;\n"
+                          "else q <= i; end")
+    assert other.reasons() == ("clock-unclear",)
+
+
 def test_a_reset_alone_leaves_nothing_synchronous(sample: Reader) -> None:
     found = block(sample, "always @(posedge clk or posedge rst) if (rst) q <= 0;")
     assert found.block.synchronous is None
