@@ -10,7 +10,8 @@ from rewriter.model.source import RtlSource
 
 WRAPPERS = (RISING, FALLING)
 
-_STUB = f"(input wire {PORTS.clock}, input wire {PORTS.wake}, input wire {PORTS.test}, output wire {PORTS.output}); endmodule"
+_INPUTS = ", ".join(f"input wire {name}" for name in (PORTS.clock, PORTS.wake, PORTS.test))
+_STUB = f"({_INPUTS}, output wire {PORTS.output}); endmodule"
 _WRAPPER = re.compile(rb"\bmodule\s+(%s|%s)\b.*?\bendmodule\b" % (FALLING.encode(), RISING.encode()), re.DOTALL)
 _MODULE = re.compile(r"\bmodule\s+(\w+)")
 _PLAIN = re.compile(r"[\w./+\-]+\Z")

@@ -109,7 +109,7 @@ CLOCKS: dict[str, tuple[tuple[tuple[str, str], ...], str]] = {
 }
 
 
-@pytest.mark.parametrize(("changes", "reason"), CLOCKS.values(), ids=CLOCKS)
+@pytest.mark.parametrize("changes,reason", CLOCKS.values(), ids=CLOCKS)
 def test_wrong_clock(changes: tuple[tuple[str, str], ...], reason: str) -> None:
     fails(cell(answer(GOLD, planted(*changes)), "u_icg_glow"), "glow", reason)
 
@@ -292,7 +292,7 @@ endmodule"""
 
 
 @pytest.mark.parametrize(
-    ("c", "r", "reason"),
+    "c,r,reason",
     [("clk", "rst_n", ""), ("clk2", "rst_n", "foreign-domain"), ("clk", "por_n", "foreign-reset")],
 )
 def test_source_of_the_wake_condition(c: str, r: str, reason: str) -> None:
@@ -320,7 +320,7 @@ WAKE_SOURCES: dict[str, tuple[str, str, str]] = {
 }
 
 
-@pytest.mark.parametrize(("extra", "wake", "reason"), WAKE_SOURCES.values(), ids=WAKE_SOURCES)
+@pytest.mark.parametrize("extra,wake,reason", WAKE_SOURCES.values(), ids=WAKE_SOURCES)
 def test_wake_condition_that_moves_within_a_cycle(extra: str, wake: str, reason: str) -> None:
     text = """module lamp (input logic clk, clk2, en, d, output logic q, p{port}); {extra} {cell}
         always_ff @(posedge clk2) p <= d;

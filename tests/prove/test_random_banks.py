@@ -19,7 +19,7 @@ class Maker:
     """Writes random clocked bodies and wake conditions over `q` and `i`."""
 
     def __init__(self, seed: int) -> None:
-        self.source = random.Random(seed)
+        self.source = random.Random(seed)  # noqa: S311 (stimulus, no secrets)
 
     def term(self) -> str:
         name, width = self.source.choice((("q", STATE), ("i", INPUT), ("i", INPUT)))
@@ -80,7 +80,10 @@ endmodule
 def top(*, gated: bool) -> str:
     port, pin = (", input wire test_en", ", .test_en(test_en)") if gated else ("", "")
     instances = "\n".join(f"bank{n} b{n} (.clk(clk), .i(i), .q(q[{n * STATE} +: {STATE}]){pin});" for n in range(BANKS))
-    return f"module lamp (input wire clk, input wire [{INPUT - 1}:0] i, output wire [{BANKS * STATE - 1}:0] q{port});\n{instances}\nendmodule\n"
+    return f"""module lamp (input wire clk, input wire [{INPUT - 1}:0] i, output wire [{BANKS * STATE - 1}:0] q{port});
+{instances}
+endmodule
+"""
 
 
 def bench() -> str:

@@ -45,7 +45,7 @@ FINE = {
 }
 
 
-@pytest.mark.parametrize(("body", "wake"), FINE.values(), ids=FINE)
+@pytest.mark.parametrize("body,wake", FINE.values(), ids=FINE)
 def test_x_in_the_next_state_is_free(body: str, wake: str) -> None:
     assert answer(*both(body, wake)).proved
 
@@ -63,7 +63,7 @@ REFUSED = {
 }
 
 
-@pytest.mark.parametrize(("body", "wake"), REFUSED.values(), ids=REFUSED)
+@pytest.mark.parametrize("body,wake", REFUSED.values(), ids=REFUSED)
 def test_x_in_the_wake_condition_is_refused(body: str, wake: str) -> None:
     found = cell(answer(*both(body, wake)), "u_icg_q")
     assert found.kind is EvidenceKind.DISPROVED
