@@ -44,15 +44,22 @@ class Locator:
         """Give the bytes of a range in its file; a macro use counts as a whole."""
         return self.placed(source)[0]
 
-    def placed(self, source: pyslang.SourceRange) -> tuple[Span, bool]:
-        """Give the span of a range, and whether the text there is exactly this range (so that it may be copied)."""
+    def plain(self, source: pyslang.SourceRange) -> Span | None:
+        """Give the span of a range whose ends are file text, None when an end comes from a macro."""
         start, end = source.start, source.end
         path = self._files.get(start.buffer.id)
-        if path is not None and self._files.get(end.buffer.id) == path:
-            return Span(path, start.offset, end.offset), True
+        if path is None or self._files.get(end.buffer.id) != path:
+            return None
+        return Span(path, start.offset, end.offset)
+
+    def placed(self, source: pyslang.SourceRange) -> tuple[Span, bool]:
+        """Give the span of a range, and whether the text there is exactly this range (so that it may be copied)."""
+        plain = self.plain(source)
+        if plain is not None:
+            return plain, True
         edges = _Edges()
-        first_path, first = self._leave_macros(start, edges, at_end=False)
-        last_path, last = self._leave_macros(end, edges, at_end=True)
+        first_path, first = self._leave_macros(source.start, edges, at_end=False)
+        last_path, last = self._leave_macros(source.end, edges, at_end=True)
         if first_path != last_path or last < first:
             return Span(first_path, first, first), False
         return Span(first_path, first, last), edges.exact and edges.balance == 0

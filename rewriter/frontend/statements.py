@@ -101,10 +101,12 @@ class Statements:
 
     def whole(self, source: pyslang.SourceRange) -> Span:
         """Give the span of a statement; one that begins or ends inside a macro traps the block."""
+        plain = self._locator.plain(source)
+        if plain is not None:
+            return plain
         span = self._locator.span(source)
         macro = self._locator.macro_at(source.start) or self._locator.macro_at(source.end)
-        if macro:
-            self.trap("inside-macro", span, macro)
+        self.trap("inside-macro", span, macro or "")
         return span
 
     def _span(self, statement: Bound) -> Span:
