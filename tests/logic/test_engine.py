@@ -32,7 +32,11 @@ def test_first_run_is_announced_once(monkeypatch: pytest.MonkeyPatch) -> None:
 
 @pytest.mark.usefixtures("empty_cache")
 def test_engine_that_does_not_start_is_no_answer(monkeypatch: pytest.MonkeyPatch) -> None:
-    monkeypatch.setattr(engine, "run", lambda *_: engine.Ran(ok=False, messages="no such module"))
+    def run(script: str, folder: Path, seconds: float) -> engine.Ran:
+        del script, folder, seconds
+        return engine.Ran(ok=False, messages="no such module")
+
+    monkeypatch.setattr(engine, "run", run)
     with pytest.raises(NoAnswerError, match="does not start: no such module"):
         engine.compile_once(None)
 
