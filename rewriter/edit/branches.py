@@ -68,7 +68,9 @@ class Printer:
             return self._attached(head, statement.then)
         guarded = self._ends_open(statement.then)
         lines = self._attached(head, statement.then, bracket=guarded)
-        other = self._attached("else", statement.other)
+        # `else ;` would make lint tools ask whether the semicolon was meant.
+        empty = isinstance(statement.other, Empty)
+        other = ["else begin end"] if empty else self._attached("else", statement.other)
         if lines[-1] == "end":
             return [*lines[:-1], f"end {other[0]}", *other[1:]]
         return [*lines, *other]

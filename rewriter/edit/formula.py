@@ -5,9 +5,10 @@ from rewriter.model.expr import Call, Concatenation, Conditional, Constant, Expr
 from rewriter.model.source import SourceText
 from rewriter.model.wake import Always, And, Atom, Formula, Never, Not, Or
 
-# Operators that bind no tighter than && and || (IEEE 1800-2017 table 11-2).
-_LOOSER_THAN_AND = frozenset({"||", "->", "<->"})
-_LOOSER_THAN_OR = frozenset({"->", "<->"})
+# Operators that bind no tighter than && (IEEE 1800-2017 table 11-2), and those that take brackets inside ||: the
+# looser ones, and && since lint tools ask for them there.
+_BRACKETS_IN_AND = frozenset({"||", "->", "<->"})
+_BRACKETS_IN_OR = frozenset({"&&", "->", "<->"})
 
 
 class FormulaWriter:
@@ -36,16 +37,15 @@ class FormulaWriter:
             case Not(inner):
                 return f"!({self.write(inner)})"
             case And(operands):
-                return " && ".join(self._operand(operand, _LOOSER_THAN_AND, loose=(Or,)) for operand in operands)
+                return " && ".join(self._operand(operand, _BRACKETS_IN_AND, Or) for operand in operands)
             case Or(operands):
-                return " || ".join(self._operand(operand, _LOOSER_THAN_OR, loose=()) for operand in operands)
+                return " || ".join(self._operand(operand, _BRACKETS_IN_OR, And) for operand in operands)
 
-    def _operand(self, formula: Formula, looser: frozenset[str], loose: tuple[type, ...]) -> str:
+    def _operand(self, formula: Formula, operators: frozenset[str], other: type[And | Or]) -> str:
         text = self.write(formula)
-        several = isinstance(formula, (And, Or)) and len(formula.operands) > 1
-        if isinstance(formula, loose) and several:
+        if isinstance(formula, other) and len(formula.operands) > 1:
             return f"({text})"
-        if isinstance(formula, Atom) and formula.expr.width == 1 and _binds_looser(formula.expr, looser):
+        if isinstance(formula, Atom) and formula.expr.width == 1 and _needs_brackets(formula.expr, operators):
             return bracketed(text)
         return text
 
@@ -130,9 +130,9 @@ def _bare(expr: Expr) -> Expr:
     return expr
 
 
-def _binds_looser(expr: Expr, looser: frozenset[str]) -> bool:
+def _needs_brackets(expr: Expr, operators: frozenset[str]) -> bool:
     expr = _bare(expr)
-    return isinstance(expr, Conditional) or (isinstance(expr, Operation) and expr.operator in looser)
+    return isinstance(expr, Conditional) or (isinstance(expr, Operation) and expr.operator in operators)
 
 
 def _is_primary(expr: Expr) -> bool:

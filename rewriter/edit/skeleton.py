@@ -11,7 +11,7 @@ from rewriter.edit.prune import Pruner, check_separate
 from rewriter.edit.text import WIDTH, CannotEditError, Page, copied, indented, renamed, words
 from rewriter.model.design import ClockedBlock, Language, Module, Variable
 from rewriter.model.source import Span
-from rewriter.model.statement import Assign, Block, Case, If, Loop, Statement
+from rewriter.model.statement import Assign, Block, Case, If, LocalDeclaration, Loop, Statement
 from rewriter.model.wake import Always, And, Atom, Formula, Leaf, Skeleton, WakeCondition
 
 _INTEGRAL = re.compile(
@@ -76,7 +76,7 @@ class SkeletonWriter:
     def _always_comb(self) -> list[str]:
         branches = self._branches(self.signal)
         locals_ = self._own_names(branches, [], "_t")
-        declared = [*self._hoisted(branches), *self._temporaries(branches)]
+        declared = self._declared(branches)
         named = f" : {self.signal}_branches" if declared else ""
         body = [renamed(line, locals_) for line in (*declared, f"{self.signal} = 1'b0;", *branches)]
         return [f"logic {self.signal};", f"always_comb begin{named}", *indented(body, self.step), "end"]
@@ -86,7 +86,7 @@ class SkeletonWriter:
         branches = self._branches(function)
         arguments = self._arguments(branches)
         inputs = self._own_names(branches, [a.name for a in arguments], "_i")
-        declared = [*self._hoisted(branches), *self._temporaries(branches)]
+        declared = self._declared(branches)
         body = ["begin", *indented([f"{function} = 1'b0;", *branches], self.step), "end"]
         inside = [renamed(line, inputs) for line in (*declared, *body)]
         kinds = [(inputs.get(a.name, a.name), a.kind) for a in arguments]
@@ -98,7 +98,8 @@ class SkeletonWriter:
         """Give the copy's variables names of their own; text of macros names the original's, so it forbids that."""
         if any("`" in line for line in branches):
             return {}
-        return self.names.suffixed([*passed, *self._written(branches)], suffix)
+        lent = (_simple(path) for declaration in self._lent(branches) for path in declaration.names)
+        return self.names.suffixed([*passed, *lent, *self._written(branches)], suffix)
 
     def _branches(self, target: str) -> list[str]:
         def label(block: Block) -> str:
@@ -168,12 +169,16 @@ class SkeletonWriter:
             case _:
                 return statement
 
-    def _hoisted(self, branches: list[str]) -> list[str]:
+    def _lent(self, branches: list[str]) -> list[LocalDeclaration]:
         """Give the declarations of the outermost block that the copy needs."""
-        outer = self._synchronous
-        used = words("\n".join(branches))
-        hoisted = outer.declarations if isinstance(outer, Block) else ()
-        return [copied(self.page.text(d.span)) for d in hoisted if used & {_simple(path) for path in d.names}]
+        outer, used = self._synchronous, words("\n".join(branches))
+        declarations = outer.declarations if isinstance(outer, Block) else ()
+        return [d for d in declarations if used & {_simple(path) for path in d.names}]
+
+    def _declared(self, branches: list[str]) -> list[str]:
+        """Declare what the outermost block declared, and the module's temporaries that the copy writes."""
+        lent = [re.sub(r"\Aautomatic\s+(?!.*=)", "", copied(self.page.text(d.span))) for d in self._lent(branches)]
+        return lent + self._temporaries(branches)
 
     def _temporaries(self, branches: list[str]) -> list[str]:
         """Declare the module's temporaries and loop variables that the copy writes."""

@@ -267,7 +267,7 @@ def test_an_else_keeps_its_if(tmp_path: Path) -> None:
         "    always @(posedge clk)\n"
         "        if (rst)\n"
         "            if (en) p <= d[7];\n"
-        "            else ;\n"
+        "            else begin end\n"
         "        else p <= d[6];\n"
     )
     done.compile()

@@ -39,7 +39,7 @@ def test_conditions_are_copied_and_joined() -> None:
     t = Texts()
     a, b, c = t.name("a"), t.name("b"), t.name("c")
     assert t.write(And((a, b, c))) == "a && b && c"
-    assert t.write(Or((a, And((b, c))))) == "a || b && c"
+    assert t.write(Or((a, And((b, c))))) == "a || (b && c)"
     assert t.write(And((Or((a, b)), c))) == "(a || b) && c"
     assert t.write(Not(And((a, b)))) == "!(a && b)"
     assert t.write(And((Not(a), Not(Not(b))))) == "!a && b"
@@ -56,7 +56,7 @@ def test_brackets_stand_where_precedence_needs_them() -> None:
     a = t.name("a")
     assert t.write(And((a, either))) == "a && (x || y)"
     assert t.write(Or((a, either))) == "a || x || y"
-    assert t.write(Or((a, both))) == "a || x && y"
+    assert t.write(Or((a, both))) == "a || (x && y)"
     assert t.write(Or((a, implied))) == "a || (x -> y)"
     assert t.write(And((a, less))) == "a && x < y"
     assert t.write(Or((choice, a))) == "(s ? x : y) || a"
