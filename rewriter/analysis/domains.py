@@ -96,10 +96,8 @@ class Sources:
                 if launch.clock != clock:
                     return "foreign-domain", f"{name} runs on {launch.clock}, the bank on {clock}"
                 if resets and launch.resets - resets:
-                    return (
-                        "foreign-reset",
-                        f"{name} is reset by {', '.join(sorted(launch.resets))}, the bank by {', '.join(sorted(resets))}",
-                    )
+                    theirs, ours = (", ".join(sorted(names)) for names in (launch.resets, resets))
+                    return "foreign-reset", f"{name} is reset by {theirs}, the bank by {ours}"
         for name in sorted(self.leaves(value_names - own)):
             if any(launch.blocking for launch in self.launches.get(name, ())):
                 return "blocking-source", f"{name} is written with ="

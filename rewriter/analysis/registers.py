@@ -71,7 +71,7 @@ def groups(block: ClockedBlock, module: Module, source: SourceText) -> tuple[Gro
         graph.add_nodes_from(ranges)
         graph.add_edges_from(pairwise(ranges))
     _tie_overlaps(graph)
-    found = [_group(block, module, source, component, assigns) for component in nx.connected_components(graph)]
+    found = [_group(block, source, component, assigns) for component in nx.connected_components(graph)]
     return tuple(sorted(found, key=lambda g: g.assigns[0].span.start if g.assigns else block.span.end))
 
 
@@ -98,7 +98,6 @@ def _tie_overlaps(graph: "nx.Graph[tuple[str, tuple[int, int]]]") -> None:
 
 def _group(
     block: ClockedBlock,
-    module: Module,
     source: SourceText,
     nodes: set[tuple[str, tuple[int, int]]],
     assigns: list[Assign],
@@ -147,7 +146,7 @@ def _parts(block: ClockedBlock, name: str, written: list[Target], source: Source
 
 
 def _select(target: Target, source: SourceText) -> str:
-    """Give what follows the variable in the text of a target, without spacing; empty for the whole, or out of a macro."""
+    """Give what follows the variable in the text of a target, without spacing; empty for the whole, or in a macro."""
     text = "".join(source.slice(target.span).decode("latin-1").split())
     path = "".join(target.variable.split())
     while not text.startswith(path) and "." in path:

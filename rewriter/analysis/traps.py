@@ -72,10 +72,9 @@ def of_block(context: Context) -> Reason | None:
     source = context.design.source.by_path[block.span.file]
     if regions.writes_conditionally(block, source):
         return context.reason("inactive-code", block.span)
-    if block.label and any(
-        n == block.label or n.startswith(f"{block.label}.") for n in context.module.external_references
-    ):
-        return context.reason("labelled-block", block.span, block.label)
+    label = block.label
+    if label and any(n == label or n.startswith(f"{label}.") for n in context.module.external_references):
+        return context.reason("labelled-block", block.span, label)
     return None
 
 
@@ -102,36 +101,52 @@ def of_group(context: Context, group: Group) -> Reason | None:
 
 
 def _group_traps(context: Context, group: Group) -> Iterator[Reason]:
-    block, module = context.block, context.module
-    where = group.assigns[0].span if group.assigns else block.span
-    if any(target.is_local for statement in group.assigns for target in statement.targets):
-        yield context.reason("not-copyable", where, "the register is declared inside its block")
-    mixed = group.variables & context.temporaries.names
-    if mixed:
-        yield context.reason("blocking-source", where, f"{_names(mixed)} is written with both = and <=")
+    where = group.assigns[0].span if group.assigns else context.block.span
+    yield from _ill_placed(context, group, where)
     yield from _other_writers(context, group, where)
-    for name in group.variables & module.drives_clocks.keys():
-        yield context.reason("drives-clock", module.drives_clocks[name], _last(name))
-    for name in sorted(group.variables & module.variables.keys()):
-        kept = _KEEP & {attribute.lower() for attribute in module.variables[name].attributes}
-        if kept:
-            yield context.reason(
-                "keep-attribute", module.variables[name].span, f"{_last(name)}: {', '.join(sorted(kept))}"
-            )
-    for reset in block.resets:
-        load = _changing_load(reset, group)
-        if load:
-            yield context.reason("async-load", load, ", ".join(part.text for part in group.parts))
-    if len({_loads(reset, group) for reset in block.resets}) > 1:
-        yield context.reason("async-load", block.span, "its asynchronous resets load different values")
-    outside = sorted(n for n in group.variables if n not in module.variables and module.variables)
-    if outside:
-        yield context.reason("hierarchical-name", where, _names(frozenset(outside)))
+    yield from _wanted_elsewhere(context, group)
+    yield from _reset_traps(context, group)
     for statement in group.assigns:
         for node in statement.rhs.walk():
             impure = isinstance(node, Call) and not node.pure
             if impure or (isinstance(node, Operation) and node.operator in ASSIGNING):
                 yield context.reason("impure-call", statement.span)
+
+
+def _ill_placed(context: Context, group: Group, where: Span) -> Iterator[Reason]:
+    """Refuse registers that are declared inside the block or outside the module, or written in both ways."""
+    if any(target.is_local for statement in group.assigns for target in statement.targets):
+        yield context.reason("not-copyable", where, "the register is declared inside its block")
+    mixed = group.variables & context.temporaries.names
+    if mixed:
+        yield context.reason("blocking-source", where, f"{_names(mixed)} is written with both = and <=")
+    variables = context.module.variables
+    outside = frozenset(n for n in group.variables if n not in variables and variables)
+    if outside:
+        yield context.reason("hierarchical-name", where, _names(outside))
+
+
+def _wanted_elsewhere(context: Context, group: Group) -> Iterator[Reason]:
+    """Refuse registers that clock or reset others, and those marked to stay as they are."""
+    module = context.module
+    for name in sorted(group.variables & module.drives_clocks.keys()):
+        yield context.reason("drives-clock", module.drives_clocks[name], _last(name))
+    for name in sorted(group.variables & module.variables.keys()):
+        kept = _KEEP & {attribute.lower() for attribute in module.variables[name].attributes}
+        if kept:
+            span = module.variables[name].span
+            yield context.reason("keep-attribute", span, f"{_last(name)}: {', '.join(sorted(kept))}")
+
+
+def _reset_traps(context: Context, group: Group) -> Iterator[Reason]:
+    """Refuse asynchronous resets whose value can change while they last."""
+    resets = context.block.resets
+    for reset in resets:
+        load = _changing_load(reset, group)
+        if load:
+            yield context.reason("async-load", load, ", ".join(part.text for part in group.parts))
+    if len({_loads(reset, group) for reset in resets}) > 1:
+        yield context.reason("async-load", context.block.span, "its asynchronous resets load different values")
 
 
 def _other_writers(context: Context, group: Group, where: Span) -> Iterator[Reason]:

@@ -68,7 +68,7 @@ def _objection(run: Run, bank: Bank, *, allow_unproved: bool) -> Reason | None:
     seen = run.evidence.get(bank.cell, ())
     if not seen:
         return None if allow_unproved else Reason("not-checked", _unread(run, bank))
-    reasons = [reason for evidence in seen if (reason := _reason(evidence))]
+    reasons = [reason for evidence in seen if (reason := _reason(evidence) or _own_dead(evidence, bank))]
     hard = [reason for reason in reasons if reason.word not in _OPEN]
     return next(iter(hard or ([] if allow_unproved else reasons)), None)
 
@@ -86,6 +86,13 @@ def _reason(evidence: CellEvidence) -> Reason | None:
     page = PAGES.get(evidence.reason)
     word = evidence.reason if page and page.verdict is Verdict.REFUSED else _WORDS.get(evidence.kind)
     return Reason(word, evidence.detail) if word else None
+
+
+def _own_dead(evidence: CellEvidence, bank: Bank) -> Reason | None:
+    """Refuse a bank whose own register differs, although nothing reads it: only temporaries may sleep unseen."""
+    dead = {_INDEX.sub("", name) for name in evidence.dead}
+    own = {part.variable for register in bank.registers for part in register.parts}
+    return Reason("disproved", f"{min(dead & own)} differs, though nothing reads it") if dead & own else None
 
 
 def rejection_warnings(run: Run, back: Mapping[RegisterId, Reason]) -> Iterator[Note]:

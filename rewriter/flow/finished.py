@@ -44,6 +44,7 @@ def prove_folder(place: Path, limits: Limits, progress: Progress) -> Proved:
         test_port=report.get("test_ports", {}).get(gold.top),
         test_active_low=any(pin["module"] == gold.top and pin["active_low"] for pin in pins),
         limits=limits,
+        stubs=gold.stubs,
     )
     return Proved(gold.top, prove(job, progress), (*gate.warnings, *_changed(gold, report)))
 
@@ -60,7 +61,7 @@ def prove_rtl(arguments: tuple[str, ...], limits: Limits, progress: Progress) ->
     if not cells:
         names = " or ".join(WRAPPERS.values())
         raise UserError(f"the RTL holds no gating cell ({names})", help="give rewritten RTL, its cells included")
-    job = ProofJob(None, design.source, design.top, cells, test_port=None, limits=limits)
+    job = ProofJob(None, design.source, design.top, cells, test_port=None, limits=limits, stubs=design.stubs)
     return Proved(design.top, prove(job, progress), design.warnings)
 
 

@@ -115,6 +115,7 @@ def _proved(run: Run, done: Rewrite, job: Job, watch: StopWatch) -> Run:
         test_port=done.test_ports.get(run.design.top),
         test_active_low=pin is not None and pin.active_low,
         limits=job.limits,
+        stubs=run.design.stubs,
     )
     with watch.stage("prove", "proving"):
         result = prove(work, watch.progress)

@@ -7,6 +7,7 @@ from collections.abc import Generator, Sequence
 from contextlib import contextmanager
 
 from rewriter.frontend.bodies import Body, by_definition, collect
+from rewriter.frontend.boxes import black_boxes
 from rewriter.frontend.clocking import EventPorts
 from rewriter.frontend.declarations import Declarations
 from rewriter.frontend.definitions import Definitions
@@ -64,14 +65,15 @@ def _lower(elaboration: Elaboration) -> Design:
         elaboration, texts, EventPorts(bodies), Declarations(elaboration.compilation, elaboration.locator, texts),
         LazyDrivers(elaboration, elaboration.analysis, elaboration.locator), _outside_references(bodies))
     modules = tuple(lowering.module(body) for body in bodies.values())
-    boxes = {box.definitionName: box for body in bodies.values() for box in body.unknown}
+    unknown = {box.definitionName: box for body in bodies.values() for box in body.unknown}
+    boxes = black_boxes(bodies.values(), lowering.drivers, elaboration.analysis) if unknown else ()
     warnings = tuple(
         Warning(f"module {name} is unknown and stays a black box", elaboration.place(box.location),
-                "give its source, or a stub, if it matters") for name, box in boxes.items())
+                "give its source, or a stub, if it matters") for name, box in unknown.items())
     tops = tuple(top.name for top in elaboration.tops)
     return Design(
         source=elaboration.with_tops(tops), top=",".join(tops), modules=modules,
-        definitions=Definitions(elaboration, texts, by_definition(bodies)).all(), black_boxes=tuple(boxes),
+        definitions=Definitions(elaboration, texts, by_definition(bodies)).all(), black_boxes=boxes,
         drivers=lowering.drivers, warnings=elaboration.warnings + warnings,
         flop_bits=lowering.flop_bits, array_bits=lowering.array_bits)
 

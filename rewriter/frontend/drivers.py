@@ -92,6 +92,10 @@ class LazyDrivers:
         """Make a body known."""
         self._bodies[body] = expressions
 
+    def expressions(self, body: str) -> Expressions:
+        """Give what lowers expressions of a body."""
+        return self._bodies[body]
+
     def drivers_of(self, body: str, variable: str) -> tuple[Driver, ...]:
         """Give what drives a variable of a module body; empty for inputs and undriven ones."""
         key = (body, variable)

@@ -1,5 +1,6 @@
 """The elaborated design, as far as gating needs it."""
 
+import re
 from collections.abc import Mapping
 from dataclasses import dataclass
 from enum import Enum
@@ -290,6 +291,38 @@ class Definition:
 
 
 @dataclass(frozen=True)
+class BoxPort:
+    """One port of a module without source, as its connections tell; ordered ones are named `port0` and so on."""
+
+    name: str
+    width: int
+    is_output: bool
+
+
+@dataclass(frozen=True)
+class BlackBox:
+    """A module without source: the ports and parameters that its instances use."""
+
+    name: str
+    ports: tuple[BoxPort, ...]
+    parameters: tuple[str, ...]
+
+    def stub(self) -> str:
+        """Write a module with these ports and no body, for engines that want one."""
+        parameters = ", ".join(f"parameter {_written(name)} = 0" for name in self.parameters)
+        ports = ", ".join(
+            f"{'output' if port.is_output else 'input'} wire [{port.width - 1}:0] {_written(port.name)}"
+            for port in self.ports
+        )
+        return f"module {_written(self.name)}{f' #({parameters})' if parameters else ''} ({ports}); endmodule"
+
+
+def _written(name: str) -> str:
+    """Escape a name that is no simple identifier."""
+    return name if re.fullmatch(r"[A-Za-z_][\w$]*", name) else f"\\{name} "
+
+
+@dataclass(frozen=True)
 class Warning:  # noqa: A001 (the word users see)
     """A message that does not stop the run; `place` is `file:line:col` or empty."""
 
@@ -306,8 +339,13 @@ class Design:
     top: str
     modules: tuple[Module, ...]
     definitions: Mapping[str, Definition]
-    black_boxes: tuple[str, ...]
+    black_boxes: tuple[BlackBox, ...]
     drivers: Drivers
     warnings: tuple[Warning, ...] = ()
     flop_bits: int = 0  # bits written by clocked blocks, over all instances, arrays by variable index excluded
     array_bits: int = 0  # bits of arrays written by a variable index, over all instances
+
+    @property
+    def stubs(self) -> str:
+        """Give modules without bodies for everything whose source is missing."""
+        return "\n".join(box.stub() for box in self.black_boxes)

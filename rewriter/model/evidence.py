@@ -95,7 +95,7 @@ class CellEvidence:
 
 @dataclass(frozen=True)
 class Mismatch:
-    """Something outside the banks that is not equal: an output, an ungated register, a black-box input, the override."""
+    """Something outside the banks that differs: an output, an ungated register, a black-box input, the override."""
 
     module: str
     what: str

@@ -11,7 +11,14 @@ from rewriter.model.source import Span
 
 @dataclass(frozen=True, order=True)
 class Edit:
-    """Replace the bytes of `span` by `text`; `banks` says for which banks, `why` in a word (`clock`, `cell`, `split`, `test-port`, `test-connection`, `wrap`)."""
+    """Replace the bytes of `span` by `text`.
+
+    Args:
+        span: half open; empty for an insertion.
+        text: what stands there afterwards.
+        banks: for which banks.
+        why: `clock`, `cell`, `split`, `test-port`, `test-connection` or `wrap`.
+    """
 
     span: Span
     text: bytes
@@ -21,7 +28,14 @@ class Edit:
 
 @dataclass(frozen=True)
 class PlacedCell:
-    """A cell as it stands in the rewritten text. `instance` is the name within its scope (`u_icg_q`), `scope` as in Cell."""
+    """A cell as it stands in the rewritten text.
+
+    Args:
+        cell: id of the plan's cell; `definition` and `scope` as there.
+        instance: name within its scope (`u_icg_q`).
+        wake, gclk: names of its wake signal and gated clock.
+        wake_text: the wake condition as written.
+    """
 
     cell: str
     definition: str

@@ -59,10 +59,10 @@ class Statement:
 
     @cached_property
     def family(self) -> tuple[tuple["Statement", int], ...]:
-        """Give the same as walk, each with the place of its parent (-1 for this statement); kept, since blocks are large."""
+        """Give what walk gives, each with the place of its parent (-1 for this one); kept, since blocks are large."""
         family: list[tuple[Statement, int]] = [(self, -1)]
         place = 0
-        stack = [(self, 0)]
+        stack: list[tuple[Statement, int]] = [(self, 0)]
         while stack:
             statement, place = stack.pop()
             if statement is not self:
