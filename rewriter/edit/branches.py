@@ -5,11 +5,11 @@ from collections.abc import Callable, Iterator, Mapping
 from dataclasses import dataclass
 from itertools import groupby
 
-from rewriter.edit.formula import FormulaWriter, bracketed
+from rewriter.edit.formula import FormulaWriter
 from rewriter.edit.prune import ends_open
 from rewriter.edit.text import WIDTH, Page, copied, indented
 from rewriter.model.source import Span
-from rewriter.model.statement import Assign, Block, Case, CaseItem, Empty, If, Loop, Statement
+from rewriter.model.statement import Block, Case, CaseItem, Empty, If, Loop, Statement
 from rewriter.model.wake import Leaf
 
 _FEWEST = 3  # items that wake are joined from this number on
@@ -22,6 +22,7 @@ class Printer:
     Args:
         page: where their text stands.
         leaves: by the span of the assignment that wakes.
+        repeated: leaves that may come after another one.
         formulas: writes the conditions of leaves.
         target: what a leaf sets to 1.
         label: names an inner block that declares variables.
@@ -30,6 +31,7 @@ class Printer:
 
     page: Page
     leaves: Mapping[Span, Leaf]
+    repeated: frozenset[Span]
     formulas: FormulaWriter
     target: str
     label: Callable[[Block], str]
@@ -57,16 +59,18 @@ class Printer:
                 return [copied(self.page.text(statement.span))]
 
     def _leaf_line(self, leaf: Leaf) -> str:
-        set_it = f"{self.target} = 1'b1;"
         if leaf.condition is None:
-            return set_it
-        return f"if {bracketed(self.formulas.write(leaf.condition))} {set_it}"
+            return f"{self.target} = 1'b1;"
+        # An assignment and no `if`: where the condition is unknown, so is the choice that it stands for.
+        if leaf.statement in self.repeated:
+            return f"{self.target} = {self.target} || {self.formulas.alternative(leaf.condition)};"
+        return f"{self.target} = {self.formulas.write(leaf.condition)};"
 
     def _print_if(self, statement: If) -> list[str]:
         head = re.sub(r"\A(?:unique0?|priority)\s+", "", copied(self.page.text(statement.head)))
         if statement.other is None:
             return self._attached(head, statement.then)
-        guarded = self._ends_open(statement.then)
+        guarded = ends_open(statement.then)
         lines = self._attached(head, statement.then, bracket=guarded)
         # `else ;` would make lint tools ask whether the semicolon was meant.
         empty = isinstance(statement.other, Empty)
@@ -74,16 +78,6 @@ class Printer:
         if lines[-1] == "end":
             return [*lines[:-1], f"end {other[0]}", *other[1:]]
         return [*lines, *other]
-
-    def _ends_open(self, statement: Statement) -> bool:
-        if isinstance(statement, Assign):
-            leaf = self.leaves.get(statement.span)
-            return leaf is not None and leaf.condition is not None
-        if isinstance(statement, If) and statement.other:
-            return self._ends_open(statement.other)
-        if isinstance(statement, Loop):
-            return self._ends_open(statement.body)
-        return ends_open(statement)
 
     def _print_case(self, statement: Case) -> list[str]:
         head = re.sub(r"\A(?:unique0?|priority)\s+", "", copied(self.page.text(statement.head)))
@@ -118,6 +112,33 @@ class Printer:
         if short or isinstance(body, (Block, Case)) or (head == "else" and isinstance(body, If)):
             return [f"{head} {lines[0]}", *lines[1:]]
         return [head, *indented(lines, self.step)]
+
+
+def repeated_leaves(tree: Statement, leaves: Mapping[Span, Leaf]) -> frozenset[Span]:
+    """Find leaves that may come after another one in the same run."""
+    found: set[Span] = set()
+
+    def visit(statement: Statement, *, after: bool) -> bool:
+        """Note leaves, and say whether one may have come by the end of the statement."""
+        match statement:
+            case Block():
+                for inner in statement.body:
+                    after = visit(inner, after=after)
+                return after
+            case If() | Case():
+                branches = [visit(inner, after=after) for inner in statement.children()]
+                return after or any(branches)
+            case Loop():
+                return visit(statement.body, after=visit(statement.body, after=after))
+            case _ if statement.span in leaves:
+                if after:
+                    found.add(statement.span)
+                return True
+            case _:
+                return after
+
+    visit(tree, after=False)
+    return frozenset(found)
 
 
 def idle(item: CaseItem) -> str:

@@ -41,6 +41,10 @@ class FormulaWriter:
             case Or(operands):
                 return " || ".join(self._operand(operand, _BRACKETS_IN_OR, And) for operand in operands)
 
+    def alternative(self, formula: Formula) -> str:
+        """Give a formula that can stand after `||`."""
+        return self._operand(formula, _BRACKETS_IN_OR, And)
+
     def _operand(self, formula: Formula, operators: frozenset[str], other: type[And | Or]) -> str:
         text = self.write(formula)
         if isinstance(formula, other) and len(formula.operands) > 1:

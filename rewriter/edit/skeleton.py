@@ -4,7 +4,7 @@ import re
 from dataclasses import dataclass, replace
 from functools import cached_property
 
-from rewriter.edit.branches import Printer
+from rewriter.edit.branches import Printer, repeated_leaves
 from rewriter.edit.formula import FormulaWriter, wrapped
 from rewriter.edit.names import Names, is_plain
 from rewriter.edit.prune import Pruner, check_separate
@@ -105,7 +105,8 @@ class SkeletonWriter:
         def label(block: Block) -> str:
             return f"{self.signal}_{block.span.start - self.block.span.start}"
 
-        printer = Printer(self.page, self._leaves, self.formulas, target, label, self.step)
+        repeated = repeated_leaves(self._tree, self._leaves)
+        printer = Printer(self.page, self._leaves, repeated, self.formulas, target, label, self.step)
         # The outermost block lends its declarations to the copy, so that its begin and end can go.
         opened = isinstance(self._tree, Block) and self._tree.span == self._synchronous.span
         parts = self._tree.children() if opened else (self._tree,)

@@ -385,3 +385,27 @@ def test_generated_files_are_named_in_a_warning(tmp_path: Path) -> None:
     (warning,) = done.rewrite.warnings
     assert warning.place == str(tmp_path / "m.sv")
     assert "generated" in warning.message
+
+
+def test_a_choice_of_the_old_value_wakes_by_its_condition(tmp_path: Path) -> None:
+    # An unknown condition merges both values (IEEE 1800-2017 11.4.11), so the wake signal must be unknown as well.
+    done = body_of(
+        tmp_path,
+        "    always_ff @(posedge clk) begin\n"
+        "        case (d[1:0])\n"
+        "            2'd0: q <= en ? d : q;\n"
+        "            2'd1: q <= go && en ? ~d : q;\n"
+        "            default: ;\n"
+        "        endcase\n"
+        "        if (rst) q <= en ? q : 8'd0;\n"
+        "    end",
+    )
+    assert (
+        "        case (d[1:0])\n"
+        "            2'd0: wake_q = en;\n"
+        "            2'd1: wake_q = go && en;\n"
+        "            default: ;\n"
+        "        endcase\n"
+        "        if (rst) wake_q = wake_q || !en;\n"
+    ) in inside(done)
+    done.compile()
