@@ -1,11 +1,11 @@
 """Golden cases: a folder each, with an input, what is expected of its registers, and the output as it was reviewed.
 
-    input.sv | input.v      `// expect: REGISTER gated|left|refused [reason][: part of the detail]` lines say what must
-                            come out, whatever the golden files say
-    args                    further arguments, one a line: `{case}` is the folder, `{cells}` a wrapper of ours;
-                            --off, --cell-map, --min-bits, --test-pin and --test-port are options of the run
-    expected.sv | .v        the rewritten input (written by pytest --update, then reviewed)
-    expected.json           every register with its verdict
+input.sv | input.v      `// expect: REGISTER gated|left|refused [reason][: part of the detail]` lines say what must
+                        come out, whatever the golden files say
+args                    further arguments, one a line: `{case}` is the folder, `{cells}` a wrapper of ours;
+                        --off, --cell-map, --min-bits, --test-pin and --test-port are options of the run
+expected.sv | .v        the rewritten input (written by pytest --update, then reviewed)
+expected.json           every register with its verdict
 """
 
 import json
@@ -23,7 +23,9 @@ from rewriter.model.run import Run
 from rewriter.report.rows import rows
 
 FOLDER = Path(__file__).parent.parent / "cases"
-_EXPECT = re.compile(r"// expect: (?P<register>.+?)\s+(?P<verdict>gated|left|refused)(?: (?P<word>[a-z-]+))?(?:: (?P<detail>.+))?$")
+_EXPECT = re.compile(
+    r"// expect: (?P<register>.+?)\s+(?P<verdict>gated|left|refused)(?: (?P<word>[a-z-]+))?(?:: (?P<detail>.+))?$"
+)
 
 
 @dataclass(frozen=True)
@@ -74,6 +76,19 @@ class Case:
 
     def option(self, name: str) -> list[str]:
         return [a.split("=", 1)[1] for a in self.arguments if a.startswith(f"--{name}=")]
+
+    def job(self, arguments: tuple[str, ...]) -> flow.Job:
+        """Make the job of the case over other arguments; no engine is asked."""
+        return flow.Job(
+            arguments,
+            load_cell_map(next(iter(self.option("cell-map")), "behavioural")),
+            min_bits=int(next(iter(self.option("min-bits")), 4)),
+            test_port=next(iter(self.option("test-port")), "test_en"),
+            test_pins=tuple(_pin(text) for text in self.option("test-pin")),
+            off=tuple(self.option("off")),
+            prove=False,
+            allow_unproved=True,
+        )
 
 
 _OWN = ("--off=", "--cell-map=", "--min-bits=", "--test-pin=", "--test-port=")
@@ -138,24 +153,15 @@ class Outcome:
 
 def rewrite(case: Case, folder: Path, cells: Path) -> Outcome:
     """Run a case without the engine, and write its output and whatever it includes into a folder."""
-    job = flow.Job(
-        (str(case.input), *case.rtl_arguments(cells), f"-I{case.folder}"),
-        load_cell_map(next(iter(case.option("cell-map")), "behavioural")),
-        min_bits=int(next(iter(case.option("min-bits")), 4)),
-        test_port=next(iter(case.option("test-port")), "test_en"),
-        test_pins=tuple(_pin(text) for text in case.option("test-pin")),
-        off=tuple(case.option("off")),
-        prove=False,
-        allow_unproved=True,
-    )
-    run = flow.rewrite(job, lambda _: None)
+    run = flow.rewrite(case.job((str(case.input), *case.rtl_arguments(cells), f"-I{case.folder}")), lambda _: None)
     changes = {change.path: change.new for change in run.rewrite.files} if run.rewrite else {}
     folder.mkdir(parents=True)
     for path in case.folder.iterdir():
         if path.suffix in {".v", ".sv", ".vh", ".svh"} and not path.name.startswith("expected"):
             (folder / path.name).write_bytes(changes.get(str(path), path.read_bytes()))
-    for name, text in (run.rewrite.cell_files if run.rewrite else {}).items():
-        (folder / name).write_text(text, encoding="utf-8")
+    if run.rewrite:
+        for name, text in run.rewrite.cell_files.items():
+            (folder / name).write_text(text, encoding="utf-8")
     assert set(changes) <= {str(case.input)}, "only the input of a case may change"
     return Outcome(case, run, (folder / case.input.name).read_bytes(), folder)
 
@@ -173,9 +179,7 @@ def unmet(outcome: Outcome) -> Iterator[str]:
     for wish in outcome.case.expectations:
         mine = [row for row in found if wish.register.strip() in [name.strip() for name in row["registers"]]]
         met = any(
-            row["verdict"] == wish.verdict
-            and wish.word in ("", row["reason"])
-            and wish.detail in row["detail"]
+            row["verdict"] == wish.verdict and wish.word in ("", row["reason"]) and wish.detail in row["detail"]
             for row in mine
         )
         if not met:

@@ -7,7 +7,6 @@ import pytest
 
 from tests.golden.cases import Case, Outcome, all_cases, rewrite, wrappers
 
-
 GoldenBytes = Callable[[Path, bytes], None]
 
 

@@ -55,7 +55,9 @@ def bench(devices: Sequence[Device], *, gate: bool) -> str:
         for number in range(len(devices))
         for style in range(len(STYLES))
     ]
-    return "\n".join(["`timescale 1ns/1ps", *parts, "module bench;", *runs, f"    initial #{CYCLES * 10} $finish;", "endmodule", ""])
+    return "\n".join(
+        ["`timescale 1ns/1ps", *parts, "module bench;", *runs, f"    initial #{CYCLES * 10} $finish;", "endmodule", ""]
+    )
 
 
 def _seed(number: int, style: int) -> str:
@@ -73,7 +75,7 @@ def _harness(number: int, device: Device, *, gate: bool) -> str:
     lines = [
         f"module drive_{number};",
         "    parameter STYLE = 0, SEED = 1, RESET = 0, TEST = 0, DIRTY = 0;",
-        *(f"    {'reg' if port.direction == 'in' else 'wire'} [{port.width - 1}:0] {_local(port)};" for port in device.top.ports),
+        *(_declaration(port) for port in device.top.ports),
         "    reg test_pin;",
         "    reg [31:0] dice;",
         "    integer cycle;",
@@ -104,12 +106,19 @@ def _harness(number: int, device: Device, *, gate: bool) -> str:
     return "\n".join(lines)
 
 
+def _declaration(port: Port) -> str:
+    """Declare what a port connects to; a clock is low from the start, for x to 0 would be a falling edge."""
+    kind = "reg" if port.direction == "in" else "wire"
+    start = " = 0" if port.direction == "in" and is_clock(port) else ""
+    return f"    {kind} [{port.width - 1}:0] {_local(port)}{start};"
+
+
 def _clocks(clocks: list[Port]) -> Iterable[str]:
     """Toggle every clock bit at its own pace, the first with a period of 10 ns."""
-    for place, (port, bit) in enumerate((port, bit) for port in clocks for bit in range(port.width)):
-        name = f"{_local(port)}[{bit}]"
+    names = [f"{_local(port)}[{bit}]" for port in clocks for bit in range(port.width)]
+    for place, name in enumerate(names):
         half = 5 if place == 0 else 7 + 2 * place
-        yield f"    initial begin {name} = 1'b0; forever #{half} {name} = ~{name}; end"
+        yield f"    initial forever #{half} {name} = ~{name};"
 
 
 def _beat(clocks: list[Port]) -> str:
@@ -126,19 +135,18 @@ def _resets(resets: list[Port]) -> Iterable[str]:
 
 
 def _early_resets(resets: list[Port]) -> Iterable[str]:
-    """Pulse resets between the edges, in the low and in the high phase."""
+    """Pulse resets between the edges (which stand at whole nanoseconds), in the low and in the high phase."""
     for place, port in enumerate(resets):
-        yield (
-            f"    initial if (RESET == 4) begin #{2 + place} {_local(port)} = {_on(port)}; #1 {_local(port)} = {_off(port)};"
-            f" forever begin #{113 + 30 * place} {_local(port)} = {_on(port)}; #{1 + 7 * place} {_local(port)} = {_off(port)}; end end"
-        )
+        on, off = f"{_local(port)} = {_on(port)};", f"{_local(port)} = {_off(port)};"
+        again = f"forever begin #{113 + 30 * place} {on} #{1 + 7 * place} {off} end"
+        yield f"    initial if (RESET == 4) begin #{2 + place}.5 {on} #1 {off} {again} end"
 
 
 def _inputs(data: list[Port]) -> Iterable[str]:
     """Drive inputs as clocked logic does; long quiet and busy spells, small values and wide ones in turn."""
     for port in data:
         words = -(-port.width // 32)
-        yield f"        next; if (cycle < 2 || !cycle[4] || dice[3:0] == 0) begin"
+        yield "        next; if (cycle < 2 || !cycle[4] || dice[3:0] == 0) begin"
         for word in range(words):
             high = min(port.width, 32 * word + 32) - 1
             mask = " & {32{dice[20]}} & {dice[15:0], dice[31:16]}" if port.width > 1 else ""
@@ -151,9 +159,7 @@ def _trace(device: Device, outputs: list[Port], clocks: list[Port]) -> Iterable[
     if not outputs or not clocks:
         return
     values = ", ".join(_local(port) for port in outputs)
-    yield (
-        f'    always @({_beat(clocks)}) #4 $display("# {device.name} %0d %0d %b", STYLE, $time, {{{values}}});'
-    )
+    yield (f'    always @({_beat(clocks)}) #4 $display("# {device.name} %0d %0d %b", STYLE, $time, {{{values}}});')
 
 
 def _on(port: Port) -> str:

@@ -2,9 +2,9 @@
 
 from collections.abc import Sequence
 from dataclasses import dataclass
-from pathlib import Path
+from typing import cast
 
-from pyslang.ast import ArgumentDirection, Compilation
+from pyslang.ast import ArgumentDirection, Compilation, InstanceSymbol, PortSymbol
 from pyslang.driver import Driver
 
 
@@ -52,15 +52,10 @@ def top_of(arguments: Sequence[str]) -> Top:
     """Find the one top module that is no wrapper of ours."""
     driver, compilation = slang(arguments)
     compilation.getAllDiagnostics()
-    (top,) = [i for i in compilation.getRoot().topInstances if not i.name.startswith("stillclock_icg")]
-    ports = [
-        Port(port.name, _DIRECTIONS[port.direction], port.type.bitWidth)  # pyright: ignore[reportAttributeAccessIssue, reportUnknownMemberType, reportUnknownArgumentType]
-        for port in top.body.portList
-    ]
-    del driver
-    return Top(top.name, tuple(ports))
-
-
-def files(folder: Path) -> list[str]:
-    """Give the sources of a folder that are compiled, includes left out."""
-    return [str(path) for path in sorted(folder.iterdir()) if path.suffix in {".v", ".sv"}]
+    instances = cast("list[InstanceSymbol]", compilation.getRoot().topInstances)  # pyright: ignore[reportUnknownMemberType]
+    (top,) = [one for one in instances if not one.name.startswith("stillclock_icg")]
+    symbols = cast("list[PortSymbol]", top.body.portList)  # pyright: ignore[reportUnknownMemberType]
+    ports = tuple(Port(symbol.name, _DIRECTIONS[symbol.direction], symbol.type.bitWidth) for symbol in symbols)
+    name = str(top.name)
+    del instances, top, symbols, driver  # symbols must not outlive the driver
+    return Top(name, ports)

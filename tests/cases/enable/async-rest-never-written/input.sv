@@ -1,0 +1,19 @@
+// expect: gate_q gated
+// expect: spare left never-written
+// What stays in the block is written by the reset alone; the reset keeps its else, which engines ask for.
+module lock_keeper (
+    input  logic       clk, rst,
+    input  logic       open,
+    input  logic [5:0] level,
+    output logic [5:0] gate_q,
+    output logic [4:0] spare
+);
+    always_ff @(posedge clk or posedge rst) begin
+        if (rst) begin
+            gate_q <= 6'd6;
+            spare <= 5'd17;
+        end else begin
+            if (open) gate_q <= level;
+        end
+    end
+endmodule
