@@ -37,7 +37,7 @@ class Printer:
     label: Callable[[Block], str]
     step: str
 
-    def lines(self, statement: Statement) -> list[str]:  # noqa: PLR0911 (one return per kind)
+    def lines(self, statement: Statement) -> list[str]:
         """Give the lines of a statement, starting at the left margin."""
         match statement:
             case Block():

@@ -17,7 +17,7 @@ class FormulaWriter:
     def __init__(self, texts: dict[str, SourceText]) -> None:
         self._texts = texts
 
-    def write(self, formula: Formula) -> str:  # noqa: PLR0911 (one return per kind)
+    def write(self, formula: Formula) -> str:
         """Give a formula on one line.
 
         Raises:
