@@ -9,7 +9,7 @@ module abacus_row (
 );
     // stillclock: tally sleeps unless it is written
     wire wake_tally = {bead[3:0], wire_pos[1:0]} == {3{2'b10}} || &bead[7:4] && ^wire_pos
-        || lean < -6'sd3 && (wire_pos >> bead[1:0]) != 8'd1;
+        || (lean < -6'sd3 && (wire_pos >> bead[1:0]) != 8'd1);
     wire gclk_tally;
     stillclock_icg u_icg_tally (.clk(clk), .wake(wake_tally), .test(test_en), .gclk(gclk_tally));
     always_ff @(posedge gclk_tally)

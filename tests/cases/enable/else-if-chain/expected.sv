@@ -8,7 +8,7 @@ module pond_level (
     input  wire        test_en
 );
     // stillclock: depth sleeps unless it is written
-    wire wake_depth = rst || !locked && (preset || inflow || outflow);
+    wire wake_depth = rst || (!locked && (preset || inflow || outflow));
     wire gclk_depth;
     stillclock_icg u_icg_depth (.clk(clk), .wake(wake_depth), .test(test_en), .gclk(gclk_depth));
     always_ff @(posedge gclk_depth) begin

@@ -9,7 +9,7 @@ module potter (
 );
     // the macro's `&&` must not be torn apart by a neighbour
     // stillclock: clay sleeps unless it is written
-    wire wake_clay = wet && `TURNING || !wet && !foot;
+    wire wake_clay = (wet && `TURNING) || (!wet && !foot);
     wire gclk_clay;
     stillclock_icg u_icg_clay (.clk(clk), .wake(wake_clay), .test(test_en), .gclk(gclk_clay));
     always_ff @(posedge gclk_clay)

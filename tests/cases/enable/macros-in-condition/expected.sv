@@ -13,7 +13,7 @@ module plotter (
     input  wire              test_en
 );
     // stillclock: plot sleeps unless it is written
-    wire wake_plot = rst || `BUSY(bus) && halt;
+    wire wake_plot = rst || (`BUSY(bus) && halt);
     wire gclk_plot;
     stillclock_icg u_icg_plot (.clk(clk), .wake(wake_plot), .test(test_en), .gclk(gclk_plot));
     always_ff @(posedge gclk_plot)

@@ -9,7 +9,7 @@ module fog_horn #(parameter bit QUIET = 1'b0, parameter logic [3:0] LIMIT = 4'd9
 );
     localparam logic [3:0] HALF = LIMIT / 2;
     // stillclock: fog sleeps unless it is written
-    wire wake_fog = !QUIET && haze > LIMIT || manual && haze > HALF;
+    wire wake_fog = (!QUIET && haze > LIMIT) || (manual && haze > HALF);
     wire gclk_fog;
     stillclock_icg u_icg_fog (.clk(clk), .wake(wake_fog), .test(test_en), .gclk(gclk_fog));
     always_ff @(posedge gclk_fog or negedge rst_n)

@@ -8,7 +8,7 @@ module winch_unit #(parameter bit FITTED = 1'b1) (
     input  wire        test_en
 );
     // stillclock: spare sleeps unless it is written
-    wire wake_spare = rst || FITTED && haul;
+    wire wake_spare = rst || (FITTED && haul);
     wire gclk_spare;
     stillclock_icg u_icg_spare (.clk(clk), .wake(wake_spare), .test(test_en), .gclk(gclk_spare));
     always_ff @(posedge gclk_spare)

@@ -11,7 +11,7 @@ module bee_counter (
     input  wire         test_en
 );
     // stillclock: hive sleeps unless it is written
-    wire wake_hive = rst || out && !back || back && !out;
+    wire wake_hive = rst || (out && !back) || (back && !out);
     wire gclk_hive;
     stillclock_icg u_icg_hive (.clk(clk), .wake(wake_hive), .test(test_en), .gclk(gclk_hive));
     always_ff @(posedge gclk_hive)

@@ -41,7 +41,7 @@ module shunting_yard (
             else points <= points;
         end
     // stillclock: whistle sleeps unless it is written
-    wire wake_whistle = blow && !echo || echo && !blow;
+    wire wake_whistle = (blow && !echo) || (echo && !blow);
     wire gclk_whistle;
     stillclock_icg u_icg_whistle (.clk(clk), .wake(wake_whistle), .test(test_en), .gclk(gclk_whistle));
     always_ff @(posedge gclk_whistle or negedge rst_n)

@@ -8,7 +8,7 @@ module egg_timer (
     input  wire        test_en
 );
     // stillclock: remaining sleeps unless it is written
-    wire wake_remaining = wind || remaining != 0 && !pause;
+    wire wake_remaining = wind || (remaining != 0 && !pause);
     wire gclk_remaining;
     stillclock_icg u_icg_remaining (.clk(clk), .wake(wake_remaining), .test(test_en), .gclk(gclk_remaining));
     always_ff @(posedge gclk_remaining or negedge rst_n)
