@@ -46,15 +46,19 @@ def _trim(text: str, start: int, end: int) -> Span:
 
 
 def _groups(text: str) -> Iterator[_Group]:
-    """Give the whole text and the inside of every parenthesis that groups (not `name(…)`, `[…]` or `{…}`)."""
+    """Give the whole text and the inside of every parenthesis that groups (not `name(…)`, `[…]` or `{…}`).
+
+    What is negated is left out: there `||` and `&&` change places.
+    """
     yield _group(text, Span(0, len(text)))
-    opened: list[int] = []
+    opened: list[tuple[int, bool]] = []
     for index, character in enumerate(text):
         if character in _OPEN:
-            opened.append(index)
+            outer = opened[-1][1] if opened else False
+            opened.append((index, outer or text[:index].rstrip().endswith(("!", "~"))))
         elif character in _CLOSE:
-            start = opened.pop()
-            if character == ")" and not _is_call(text, start):
+            start, negated = opened.pop()
+            if character == ")" and not negated and not _is_call(text, start):
                 yield _group(text, Span(start + 1, index))
 
 

@@ -7,7 +7,7 @@ testbench that looks at values can kill those; the proof has checks of their own
 
 import random
 import re
-from collections.abc import Callable, Iterator, Mapping, Sequence
+from collections.abc import Callable, Iterable, Iterator, Mapping, Sequence
 from dataclasses import dataclass
 from enum import StrEnum
 from itertools import pairwise
@@ -209,7 +209,9 @@ def all_faults(text: str, registers: Mapping[str, Sequence[str]]) -> tuple[Fault
     return tuple(fault for kind in KINDS for site in sites for fault in _faults(kind, site, registers))
 
 
-def plant(text: str, registers: Mapping[str, Sequence[str]], *, count: int = 50, seed: int = 1) -> tuple[Fault, ...]:
+def plant(
+    text: str, registers: Mapping[str, Sequence[str]], *, count: int = 50, seed: int = 1, kinds: Iterable[str] = KINDS
+) -> tuple[Fault, ...]:
     """Choose faults: the kinds take turns, and a seed chooses within a kind.
 
     Args:
@@ -217,11 +219,12 @@ def plant(text: str, registers: Mapping[str, Sequence[str]], *, count: int = 50,
         registers: by cell (`module.instance`), the registers behind it.
         count: how many; fewer come back only when the text offers fewer.
         seed: the choice is the same for the same seed and text.
+        kinds: what to choose from.
     """
     chooser = random.Random(seed)  # noqa: S311 - no secret is made here
-    by_kind: dict[str, list[Fault]] = {kind: [] for kind in KINDS}
+    by_kind: dict[str, list[Fault]] = {kind: [] for kind in kinds}
     for fault in all_faults(text, registers):
-        by_kind[fault.kind].append(fault)
+        by_kind.get(fault.kind, []).append(fault)
     for faults in by_kind.values():
         chooser.shuffle(faults)
     rounds = max((len(faults) for faults in by_kind.values()), default=0)

@@ -123,7 +123,7 @@ def table(outcomes: Sequence[Outcome]) -> str:
 def _row(name: str, effect: str, outcomes: Sequence[Outcome]) -> str:
     answers = [outcome.proof for outcome in outcomes if outcome.proof is not None]
     killed = sum(1 for outcome in outcomes if outcome.bench)
-    proof = str(sum(1 for answer in answers if answer.killed)) if answers else "not asked"
+    proof = str(sum(1 for answer in answers if answer.verdict)) if answers else "not asked"
     named = str(sum(1 for answer in answers if answer.named)) if answers else "not asked"
     return f"| {name} | {effect} | {len(outcomes)} | {killed} | {proof} | {named} |"
 

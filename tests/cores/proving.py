@@ -17,11 +17,12 @@ class Proof:
     """What the proof said of a fault.
 
     Attributes:
-        killed: it found a difference, or a cycle in which a cell runs though nothing is written.
+        verdict: `disproved`: it found a difference; `too often`: a cell runs in cycles in which nothing is written;
+            `unproved`: it could not read the faulty text, so the rewrite would not be accepted either; empty: proved.
         named: the difference it reports is at the faulty cell or one of its registers.
     """
 
-    killed: bool
+    verdict: str
     named: bool
 
 
@@ -51,7 +52,7 @@ class Prover:
         ((_, changed),) = self.rewritten.changed
         (folder / changed.relative_to(self.rewritten.folder)).write_text(text, encoding="utf-8")
         ran = stillclock("prove", str(folder), "--format", "json")
-        assert ran.status in {0, 1}, f"the proof gave no answer\n{ran.output[-2000:]}"
+        assert ran.status in {0, 1, 3}, f"the proof ended with {ran.status}\n{ran.output[-2000:]}"
         return json.loads(ran.output[ran.output.index("{\n") : ran.output.rindex("}\n") + 1])
 
 
@@ -59,11 +60,12 @@ def judge(fault: Fault, answer: Mapping[str, Any], wide_anyway: frozenset[str]) 
     """Read what the proof said: a difference, or a cell that newly runs in cycles in which nothing is written."""
     disproved = [cell for cell in answer["cells"] if cell["kind"] == "disproved"]
     wider = [cell for cell in answer["cells"] if cell["wider"] and _place(cell) not in wide_anyway]
-    named = any(name in _accepted(fault) for name in _named(disproved, answer["mismatches"]))
-    return Proof(
-        killed=bool(disproved or wider or answer["mismatches"]),
-        named=named or any(_place(cell) == fault.bank for cell in wider),
-    )
+    if disproved or answer["mismatches"]:
+        named = any(name in _accepted(fault) for name in _named(disproved, answer["mismatches"]))
+        return Proof("disproved", named)
+    if wider:
+        return Proof("too often", any(_place(cell) == fault.bank for cell in wider))
+    return Proof("" if answer["proved"] else "unproved", named=False)
 
 
 def _place(cell: Mapping[str, Any]) -> str:

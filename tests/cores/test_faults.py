@@ -148,6 +148,8 @@ def test_override_faults_are_set_apart() -> None:
         ("x ? a || b : c", []),  # the alternatives of a branch are not those of the whole
         ("a || b || (c | d)", [["a", "b", "(c | d)"]]),
         ("v[a || b]", []),
+        ("!(a || b) && (c || d)", [["c", "d"]]),  # under a negation, leaving one out lets the cell run more
+        ("~(x && (a || b))", []),
     ],
 )
 def test_alternatives(text: str, expected: list[list[str]]) -> None:

@@ -22,7 +22,7 @@ class Benches:
     vexriscv: VexRiscv
     logik: Logik
 
-    def of(self, core: str, limit: float = 120) -> tuple[Bench, ...]:
+    def of(self, core: str, limit: float = 600) -> tuple[Bench, ...]:
         """Give the benches of a core, quickest first, each stopped after `limit` seconds of simulation."""
         if core == "picorv32":
             return _limited(limit, self.picorv32.small, self.picorv32.firmware_verilator)
