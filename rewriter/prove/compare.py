@@ -166,6 +166,11 @@ class Comparison:
 
     # -- memories
 
+    def is_memory(self, variable: str) -> bool:
+        """Tell whether a variable of an obligation is a memory, or one word of it; scopes may hold indices as well."""
+        memories = self.gold.memories
+        return variable in memories or (variable.endswith("]") and variable.rpartition("[")[0] in memories)
+
     def _memory(self, name: str, memory: Cell) -> None:
         other = self.gate.memories.get(name)
         if other is None:

@@ -76,10 +76,14 @@ def prove_module(gold: Module, gate: Module, *, itself: bool, query_seconds: flo
     before = Side(shared, gold, None, transparent=itself)
     comparison = Comparison(shared, before, Side(shared, gate, before))
     comparison.collect()
+    return judge(comparison, Liveness(comparison))
+
+
+def judge(comparison: Comparison, live: "Liveness") -> ModuleProof:
+    """Discharge the obligations of a comparison, and say of each cell and of all else what came out."""
     cells = {name: CellFinding(gating) for name, gating in comparison.gate.gating_cells().items()}
     variables = {name for bank in comparison.banks.by_chain.values() for name in bank.variables}
     proof = ModuleProof(comparison, cells, [], [], [], len(variables), comparison.bits)
-    live = _Liveness(comparison)
     proof.findings += [Finding(fault.what, fault.detail) for fault in comparison.faults]
     proof.findings += live.unmatched()
     for bank in comparison.banks.by_chain.values():
@@ -87,7 +91,7 @@ def prove_module(gold: Module, gate: Module, *, itself: bool, query_seconds: flo
     return proof
 
 
-def _judge(proof: ModuleProof, bank: Bank, live: "_Liveness") -> None:
+def _judge(proof: ModuleProof, bank: Bank, live: "Liveness") -> None:
     failures = discharge(proof.shared, bank.obligations)
     chain = [proof.cells[gating.name] for gating in bank.cells]
     for cell in chain:
@@ -153,7 +157,7 @@ def _by_variable(failures: list[Failure]) -> dict[str, Failure]:
     return kept
 
 
-class _Liveness:
+class Liveness:
     """Which registers something reads, on either side: outputs, instances, memories, or a register that is read."""
 
     def __init__(self, comparison: Comparison) -> None:
@@ -164,8 +168,7 @@ class _Liveness:
 
     def is_live(self, variable: str) -> bool:
         """Tell whether a register (or memory) of both sides is read on either."""
-        base = variable.split("[", 1)[0] if variable.split("[", 1)[0] in self.comparison.gold.memories else variable
-        return base in self.comparison.gold.memories or ("register", base) in self.live
+        return self.comparison.is_memory(variable) or ("register", variable) in self.live
 
     def unmatched(self) -> list[Finding]:
         """List the registers that are read and stand on one side only."""

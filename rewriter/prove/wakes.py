@@ -55,14 +55,15 @@ def find_wider(proof: ModuleProof) -> None:
     masked by other logic, or left open by an x, counts as written.
     """
     comparison = proof.comparison
-    by_cell = _registers_by_cell(comparison)
+    by_cell, writes = _registers_by_cell(comparison), _memory_writes(comparison)
     for name, cell in proof.cells.items():
-        registers = by_cell.get(name)
-        if not registers or cell.gating.wake[1] != FALSE:
+        registers, stores = by_cell.get(name, []), writes.get(name, [])
+        if not registers and not stores:
             continue
         written = _Written(comparison.gold)
-        idle = comparison.aig.any_of(written.by(register) for register in registers) ^ 1
-        question = [cell.gating.wake[0], idle]
+        idle = comparison.aig.any_of([*stores, *(written.by(register) for register in registers)]) ^ 1
+        # An x that cannot happen stands in many copied branches; where one can, the cell does not surely wake.
+        question = [cell.gating.wake[0], cell.gating.wake[1] ^ 1, idle]
         answer = proof.shared.solver.ask(question)
         if isinstance(answer, Model):
             cell.wider = _example(proof.shared, cell, question, answer.values())
@@ -75,17 +76,24 @@ def _example(shared: Shared, cell: CellFinding, question: list[Lit], values: dic
 
 def _registers_by_cell(comparison: Comparison) -> dict[str, list[Register]]:
     found: dict[str, list[Register]] = {}
-    memories: set[str] = set()
     for net, clock in comparison.clocks.items():
         gold = comparison.gold.by_key.get(comparison.gate.keys[net])
         if gold is not None:
             for gating in clock.cells:
                 found.setdefault(gating.name, []).append(gold)
+    return found
+
+
+def _memory_writes(comparison: Comparison) -> dict[str, list[Lit]]:
+    """Give, by cell, when a port of the memories behind it writes in the original."""
+    found: dict[str, list[Lit]] = {}
     for chain, bank in comparison.banks.by_chain.items():
-        # Writes of memories are conditions of their own; cells that gate one are not judged.
-        if any(o.kind == "memory" for o in bank.obligations):
-            memories.update(chain)
-    return {name: registers for name, registers in found.items() if name not in memories}
+        writes = [
+            lit for o in bank.obligations if o.kind == "next" and comparison.is_memory(o.variable) for lit in o.gold
+        ]
+        for name in chain if writes else ():
+            found.setdefault(name, []).extend(writes)
+    return found
 
 
 class _Written:
