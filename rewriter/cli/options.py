@@ -27,6 +27,7 @@ class Gating(Bounds):
 
     cell_map: CellMap
     min_bits: int
+    one_clock_per_variable: bool
     test_port: str
     test_pin: tuple[TestPin, ...]
     off: tuple[str, ...]
@@ -114,6 +115,11 @@ def gating_options(command: Command) -> Command:
             help="Fewest register bits per cell.",
         ),
         click.option(
+            "--one-clock-per-variable",
+            is_flag=True,
+            help="Leave parts of a variable that would run on several clocks (linters warn of those).",
+        ),
+        click.option(
             "--test-port",
             callback=_port_name,
             default="test_en",
@@ -145,6 +151,7 @@ def job(arguments: tuple[str, ...], wishes: Gating, *, prove: bool, allow_unprov
         arguments=arguments,
         cell_map=wishes["cell_map"],
         min_bits=wishes["min_bits"],
+        one_clock_per_variable=wishes["one_clock_per_variable"],
         test_port=wishes["test_port"],
         test_pins=wishes["test_pin"],
         off=wishes["off"],

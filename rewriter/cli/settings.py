@@ -42,6 +42,7 @@ KEYS: Mapping[str, _Key] = {
     "cell-map": _TEXT,
     "min-bits": _COUNT,
     "off": _TEXTS,
+    "one-clock-per-variable": _FLAG,
     "query-seconds": _NUMBER,
     "run-seconds": _NUMBER,
     "strict": _FLAG,

@@ -20,6 +20,7 @@ class Job:
         arguments: RTL arguments for slang's driver.
         cell_map: what the cells become.
         min_bits: fewest register bits per cell.
+        one_clock_per_variable: leave parts of a variable that would run on several clocks.
         test_port: name of the port that carries the test override where none is named.
         test_pins: existing ports that carry it.
         off: `MODULE` or `MODULE.REGISTER`, left alone.
@@ -31,6 +32,7 @@ class Job:
     arguments: tuple[str, ...]
     cell_map: CellMap
     min_bits: int = 4
+    one_clock_per_variable: bool = False
     test_port: str = "test_en"
     test_pins: tuple[TestPin, ...] = ()
     off: tuple[str, ...] = ()

@@ -82,7 +82,7 @@ def _settle(design: Design) -> Settled:
 
 
 def _choose(settled: Settled, job: Job, excluded: Mapping[RegisterId, Reason]) -> Plan:
-    return choose(settled, Policy(job.min_bits, has_falling_cell=job.cell_map.supports(Edge.FALLING)), excluded)
+    return choose(settled, _policy(job), excluded)
 
 
 def _cells(job: Job, design: Design) -> dict[str, str]:
@@ -96,6 +96,14 @@ def _with_used_cells(done: Rewrite, plan: Plan) -> Rewrite:
     placed = {cell.cell for cell in done.cells}
     used = {FILES[cell.edge] for cell in plan.cells if cell.id in placed}
     return replace(done, cell_files={name: text for name, text in done.cell_files.items() if name in used})
+
+
+def _policy(job: Job) -> Policy:
+    return Policy(
+        job.min_bits,
+        has_falling_cell=job.cell_map.supports(Edge.FALLING),
+        one_clock_per_variable=job.one_clock_per_variable,
+    )
 
 
 def _timescale(design: Design) -> str | None:

@@ -62,20 +62,36 @@ def _lower(elaboration: Elaboration) -> Design:
     texts = {text.path: text.data for text in source.texts}
     bodies = collect(elaboration.tops)
     lowering = Lowering(
-        elaboration, texts, EventPorts(bodies), Declarations(elaboration.compilation, elaboration.locator, texts),
-        LazyDrivers(elaboration, elaboration.analysis, elaboration.locator), _outside_references(bodies))
+        elaboration,
+        texts,
+        EventPorts(bodies),
+        Declarations(elaboration.compilation, elaboration.locator, texts),
+        LazyDrivers(elaboration, elaboration.analysis, elaboration.locator),
+        _outside_references(bodies),
+    )
     modules = tuple(lowering.module(body) for body in bodies.values())
     unknown = {box.definitionName: box for body in bodies.values() for box in body.unknown}
     boxes = black_boxes(bodies.values(), lowering.drivers, elaboration.analysis) if unknown else ()
     warnings = tuple(
-        Warning(f"module {name} is unknown and stays a black box", elaboration.place(box.location),
-                "give its source, or a stub, if it matters") for name, box in unknown.items())
+        Warning(
+            f"module {name} is unknown and stays a black box",
+            elaboration.place(box.location),
+            "give its source, or a stub, if it matters",
+        )
+        for name, box in unknown.items()
+    )
     tops = tuple(top.name for top in elaboration.tops)
     return Design(
-        source=elaboration.with_tops(tops), top=",".join(tops), modules=modules,
-        definitions=Definitions(elaboration, texts, by_definition(bodies)).all(), black_boxes=boxes,
-        drivers=lowering.drivers, warnings=elaboration.warnings + warnings,
-        flop_bits=lowering.flop_bits, array_bits=lowering.array_bits)
+        source=elaboration.with_tops(tops),
+        top=",".join(tops),
+        modules=modules,
+        definitions=Definitions(elaboration, texts, by_definition(bodies)).all(),
+        black_boxes=boxes,
+        drivers=lowering.drivers,
+        warnings=elaboration.warnings + warnings,
+        flop_bits=lowering.flop_bits,
+        array_bits=lowering.array_bits,
+    )
 
 
 def _outside_references(bodies: dict[str, Body]) -> dict[str, frozenset[str]]:

@@ -174,9 +174,16 @@ def configure(driver: Driver, words: Sequence[str]) -> list[str]:
 def slang_words(source: RtlSource, library_dirs: Sequence[str] = (), extensions: Sequence[str] = ()) -> list[str]:
     """Write opened-up arguments as a command line for slang, independent of the working folder."""
     words = list(source.options)
-    for name, values in (("--top", source.tops), ("-G", source.parameters), ("-D", source.defines),
-                         ("-U", source.undefines), ("-I", source.include_dirs), ("-y", library_dirs),
-                         ("--libext", extensions), ("-v", source.library_files)):
+    for name, values in (
+        ("--top", source.tops),
+        ("-G", source.parameters),
+        ("-D", source.defines),
+        ("-U", source.undefines),
+        ("-I", source.include_dirs),
+        ("-y", library_dirs),
+        ("--libext", extensions),
+        ("-v", source.library_files),
+    ):
         for value in values:
             words += [name, value]
     return words + list(source.files)

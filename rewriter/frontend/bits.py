@@ -114,8 +114,9 @@ def _select(expression: ElementSelectExpression | RangeSelectExpression, outer: 
     return Extent(outer.symbol, outer.low, outer.width, exact=False, unpacked=outer.unpacked or variable_word)
 
 
-def _rightmost(expression: ElementSelectExpression | RangeSelectExpression, value: IndexValue, *,
-               ascending: bool) -> int | None:
+def _rightmost(
+    expression: ElementSelectExpression | RangeSelectExpression, value: IndexValue, *, ascending: bool
+) -> int | None:
     """Give the index of the last element that a select covers, None when it is not constant."""
     if isinstance(expression, ElementSelectExpression):
         return value(expression.selector)
@@ -146,4 +147,3 @@ def slang_bits(bounds: tuple[int, int], kind: Type) -> tuple[int, int]:
         whole = width_of(kind)
         return whole - 1, 0
     return high, low
-

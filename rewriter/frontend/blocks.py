@@ -37,8 +37,13 @@ from rewriter.model.source import Span
 from rewriter.model.statement import Block
 
 _DIRECTIVE = re.compile(rb"`(?:ifn?def|elsif|else|endif)\b")
-_ITEM_LISTS = (SyntaxKind.GenerateBlock, SyntaxKind.ModuleDeclaration, SyntaxKind.InterfaceDeclaration,
-               SyntaxKind.ProgramDeclaration, SyntaxKind.GenerateRegion)
+_ITEM_LISTS = (
+    SyntaxKind.GenerateBlock,
+    SyntaxKind.ModuleDeclaration,
+    SyntaxKind.InterfaceDeclaration,
+    SyntaxKind.ProgramDeclaration,
+    SyntaxKind.GenerateRegion,
+)
 _NO_EDGE = EdgeKind(0)  # its name is missing in the stubs
 _ALWAYS = (ProceduralBlockKind.Always, ProceduralBlockKind.AlwaysFF)
 
@@ -71,8 +76,9 @@ def _signals(timing: TimingControl) -> Iterator[SignalEventControl]:
             yield from _signals(event)
 
 
-def lower_block(block: ProceduralBlockSymbol, expressions: Expressions, locator: Locator,
-                texts: dict[str, bytes]) -> ClockedBlock:
+def lower_block(
+    block: ProceduralBlockSymbol, expressions: Expressions, locator: Locator, texts: dict[str, bytes]
+) -> ClockedBlock:
     """Lower a clocked block.
 
     Args:
@@ -103,10 +109,19 @@ def lower_block(block: ProceduralBlockSymbol, expressions: Expressions, locator:
         clock, resets, synchronous = None, (), body
         statements.trap("timing-control", span, "the event control stands inside the block")
     return ClockedBlock(
-        scope=expressions.names.scope(block), span=span, keyword=syntax.keyword.rawText, keyword_span=keyword,
-        clock=clock, resets=resets, body=body, synchronous=synchronous, traps=tuple(statements.traps),
-        disabled=_disabled(syntax, span, locator, texts), unbraced=_is_unbraced(syntax),
-        label=body.label if isinstance(body, Block) else "")
+        scope=expressions.names.scope(block),
+        span=span,
+        keyword=syntax.keyword.rawText,
+        keyword_span=keyword,
+        clock=clock,
+        resets=resets,
+        body=body,
+        synchronous=synchronous,
+        traps=tuple(statements.traps),
+        disabled=_disabled(syntax, span, locator, texts),
+        unbraced=_is_unbraced(syntax),
+        label=body.label if isinstance(body, Block) else "",
+    )
 
 
 def _event(event: SignalEventControl, expressions: Expressions, statements: Statements) -> Event:

@@ -79,13 +79,15 @@ def _fill(body: Body) -> None:
     def branch(symbol: GenerateBlockSymbol) -> VisitAction:
         return VisitAction.Skip if symbol.isUninstantiated else VisitAction.Advance
 
-    body.symbol.visit(lookup_table={
-        SymbolKind.Instance: instance,
-        SymbolKind.GenerateBlock: branch,
-        SymbolKind.ProceduralBlock: body.procedures.append,
-        SymbolKind.UninstantiatedDef: body.unknown.append,
-        ExpressionKind.HierarchicalValue: body.hierarchical.append,
-    })
+    body.symbol.visit(
+        lookup_table={
+            SymbolKind.Instance: instance,
+            SymbolKind.GenerateBlock: branch,
+            SymbolKind.ProceduralBlock: body.procedures.append,
+            SymbolKind.UninstantiatedDef: body.unknown.append,
+            ExpressionKind.HierarchicalValue: body.hierarchical.append,
+        }
+    )
     body.procedures.sort(key=_place)
 
 

@@ -26,15 +26,44 @@ from pyslang.ast import (
 from rewriter.frontend.names import Names, is_parameter
 
 # IEEE 1800-2017 clause 20: functions of their arguments alone
-_PURE_SYSTEM = frozenset((
-    "$signed", "$unsigned", "$clog2", "$bits", "$countones", "$countbits", "$onehot", "$onehot0", "$isunknown",
-    "$size", "$left", "$right", "$low", "$high", "$increment", "$dimensions", "$unpacked_dimensions", "$rtoi", "$itor",
-    "$bitstoreal", "$realtobits", "$pow", "$ln", "$log10", "$exp", "$sqrt", "$floor", "$ceil",
-))
+_PURE_SYSTEM = frozenset(
+    (
+        "$signed",
+        "$unsigned",
+        "$clog2",
+        "$bits",
+        "$countones",
+        "$countbits",
+        "$onehot",
+        "$onehot0",
+        "$isunknown",
+        "$size",
+        "$left",
+        "$right",
+        "$low",
+        "$high",
+        "$increment",
+        "$dimensions",
+        "$unpacked_dimensions",
+        "$rtoi",
+        "$itor",
+        "$bitstoreal",
+        "$realtobits",
+        "$pow",
+        "$ln",
+        "$log10",
+        "$exp",
+        "$sqrt",
+        "$floor",
+        "$ceil",
+    )
+)
 
 STEPS = {
-    UnaryOperator.Preincrement: "++", UnaryOperator.Postincrement: "++",
-    UnaryOperator.Predecrement: "--", UnaryOperator.Postdecrement: "--",
+    UnaryOperator.Preincrement: "++",
+    UnaryOperator.Postincrement: "++",
+    UnaryOperator.Predecrement: "--",
+    UnaryOperator.Postdecrement: "--",
 }
 
 
@@ -90,11 +119,15 @@ class Calls:
                 writes.append(expression.operand)
 
         table: dict[object, object] = {
-            ExpressionKind.NamedValue: reads.append, ExpressionKind.HierarchicalValue: reads.append,
-            ExpressionKind.Assignment: assign, ExpressionKind.UnaryOp: step,
+            ExpressionKind.NamedValue: reads.append,
+            ExpressionKind.HierarchicalValue: reads.append,
+            ExpressionKind.Assignment: assign,
+            ExpressionKind.UnaryOp: step,
             ExpressionKind.Call: calls.append,
-            StatementKind.Timed: other.append, StatementKind.Wait: other.append,
-            StatementKind.ProceduralAssign: other.append, StatementKind.EventTrigger: other.append,
+            StatementKind.Timed: other.append,
+            StatementKind.Wait: other.append,
+            StatementKind.ProceduralAssign: other.append,
+            StatementKind.EventTrigger: other.append,
         }
         body.visit(lookup_table=table)
         pure = not other and all(argument.direction is ArgumentDirection.In for argument in subroutine.arguments)

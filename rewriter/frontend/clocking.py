@@ -132,10 +132,14 @@ class _DataReads:
         """Give every such read."""
         self._body.symbol.visit(lookup_table={ExpressionKind.NamedValue: self._read, SymbolKind.Instance: _skip})
         if self._remaining():  # most clocks are only events; only the others are worth a closer look
-            self._body.symbol.visit(lookup_table={
-                ExpressionKind.Assignment: self._write, SymbolKind.ContinuousAssign: self._assign,
-                SymbolKind.Net: self._net, SymbolKind.Instance: _skip,
-            })
+            self._body.symbol.visit(
+                lookup_table={
+                    ExpressionKind.Assignment: self._write,
+                    SymbolKind.ContinuousAssign: self._assign,
+                    SymbolKind.Net: self._net,
+                    SymbolKind.Instance: _skip,
+                }
+            )
         yield from self._remaining()
         for _, child in self._body.children:
             for connection in child.portConnections:

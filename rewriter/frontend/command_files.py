@@ -71,8 +71,10 @@ def read_bytes(word: Word, path: str, what: str) -> bytes:
     try:
         data = Path(path).read_bytes()
     except FileNotFoundError:
-        raise word.error(f"no such {what}: {path}", "check the path; paths in a -f list start from the working "
-                         "folder, in a -F list from the list's own folder") from None
+        raise word.error(
+            f"no such {what}: {path}",
+            "check the path; paths in a -f list start from the working folder, in a -F list from the list's own folder",
+        ) from None
     except IsADirectoryError:
         raise word.error(f"{path} is a folder, not a {what}", "name the files in it") from None
     except OSError as reason:

@@ -44,10 +44,16 @@ class Declarations:
         elif syntax is not None:
             span = self._locator.span(syntax.sourceRange)
         return Variable(
-            name=name, declaration=self._declaration(symbol, span), width=width_of(kind), unpacked=unpacked,
+            name=name,
+            declaration=self._declaration(symbol, span),
+            width=width_of(kind),
+            unpacked=unpacked,
             element_width=width_of(element),
             attributes=tuple(attribute.name for attribute in self._compilation.getAttributes(symbol)),
-            is_port=is_port, is_net=isinstance(symbol, NetSymbol), span=span)
+            is_port=is_port,
+            is_net=isinstance(symbol, NetSymbol),
+            span=span,
+        )
 
     def _declaration(self, symbol: Symbol, span: Span) -> str | None:
         declared = symbol.declaredType

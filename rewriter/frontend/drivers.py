@@ -120,8 +120,9 @@ class LazyDrivers:
             found.append(Driver(WriterKind.CONTINUOUS, _whole(symbol), span, expressions.lower(initial)))
         return tuple(dict.fromkeys(found))
 
-    def _value(self, driver: ValueDriver, kind: WriterKind,
-               expressions: Expressions) -> tuple[Span, Expr | Statement | None]:
+    def _value(
+        self, driver: ValueDriver, kind: WriterKind, expressions: Expressions
+    ) -> tuple[Span, Expr | Statement | None]:
         source = driver.containingSymbol
         span = self._locator.span(driver.sourceRange)
         if kind is WriterKind.CONTINUOUS:

@@ -44,8 +44,17 @@ class Parsed:
             self.locator = Locator(self.manager)
         trees = [tree.root for tree in self.driver.syntaxTrees if tree.isLibraryUnit]
         libraries = tuple(dict.fromkeys(self.locator.span(root.sourceRange).file for root in trees))
-        self.source = RtlSource(source.files, libraries, source.include_dirs, source.defines, source.undefines,
-                                source.tops, source.parameters, source.options, tuple(texts.values()))
+        self.source = RtlSource(
+            source.files,
+            libraries,
+            source.include_dirs,
+            source.defines,
+            source.undefines,
+            source.tops,
+            source.parameters,
+            source.options,
+            tuple(texts.values()),
+        )
 
     def _parse(self, source: RtlSource, texts: dict[str, SourceText]) -> tuple[Driver, list[SyntaxTree], list[str]]:
         driver = Driver()
@@ -183,8 +192,16 @@ def _on_disk(source: RtlSource) -> RtlSource:
     """Leave out files that exist only as text; they are parsed from memory."""
     texts = source.by_path
     files = tuple(path for path in source.files if path not in texts or os.path.exists(path))  # noqa: PTH110
-    return RtlSource(files, source.library_files, source.include_dirs, source.defines, source.undefines,
-                     source.tops, source.parameters, source.options)
+    return RtlSource(
+        files,
+        source.library_files,
+        source.include_dirs,
+        source.defines,
+        source.undefines,
+        source.tops,
+        source.parameters,
+        source.options,
+    )
 
 
 def _is_utf8(data: bytes) -> bool:

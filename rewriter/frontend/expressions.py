@@ -56,22 +56,47 @@ from rewriter.model.expr import (
 from rewriter.model.source import Span
 
 _UNARY = {
-    UnaryOperator.Plus: "+", UnaryOperator.Minus: "-", UnaryOperator.BitwiseNot: "~", UnaryOperator.BitwiseAnd: "&",
-    UnaryOperator.BitwiseOr: "|", UnaryOperator.BitwiseXor: "^", UnaryOperator.BitwiseNand: "~&",
-    UnaryOperator.BitwiseNor: "~|", UnaryOperator.BitwiseXnor: "~^", UnaryOperator.LogicalNot: "!",
+    UnaryOperator.Plus: "+",
+    UnaryOperator.Minus: "-",
+    UnaryOperator.BitwiseNot: "~",
+    UnaryOperator.BitwiseAnd: "&",
+    UnaryOperator.BitwiseOr: "|",
+    UnaryOperator.BitwiseXor: "^",
+    UnaryOperator.BitwiseNand: "~&",
+    UnaryOperator.BitwiseNor: "~|",
+    UnaryOperator.BitwiseXnor: "~^",
+    UnaryOperator.LogicalNot: "!",
 }
 _WIDE_UNARY = {"+", "-", "~"}
 _BINARY = {
-    BinaryOperator.Add: "+", BinaryOperator.Subtract: "-", BinaryOperator.Multiply: "*", BinaryOperator.Divide: "/",
-    BinaryOperator.Mod: "%", BinaryOperator.BinaryAnd: "&", BinaryOperator.BinaryOr: "|", BinaryOperator.BinaryXor: "^",
-    BinaryOperator.BinaryXnor: "~^", BinaryOperator.Equality: "==", BinaryOperator.Inequality: "!=",
-    BinaryOperator.CaseEquality: "===", BinaryOperator.CaseInequality: "!==",
-    BinaryOperator.GreaterThanEqual: ">=", BinaryOperator.GreaterThan: ">", BinaryOperator.LessThanEqual: "<=",
-    BinaryOperator.LessThan: "<", BinaryOperator.WildcardEquality: "==?", BinaryOperator.WildcardInequality: "!=?",
-    BinaryOperator.LogicalAnd: "&&", BinaryOperator.LogicalOr: "||", BinaryOperator.LogicalImplication: "->",
-    BinaryOperator.LogicalEquivalence: "<->", BinaryOperator.LogicalShiftLeft: "<<",
-    BinaryOperator.LogicalShiftRight: ">>", BinaryOperator.ArithmeticShiftLeft: "<<<",
-    BinaryOperator.ArithmeticShiftRight: ">>>", BinaryOperator.Power: "**",
+    BinaryOperator.Add: "+",
+    BinaryOperator.Subtract: "-",
+    BinaryOperator.Multiply: "*",
+    BinaryOperator.Divide: "/",
+    BinaryOperator.Mod: "%",
+    BinaryOperator.BinaryAnd: "&",
+    BinaryOperator.BinaryOr: "|",
+    BinaryOperator.BinaryXor: "^",
+    BinaryOperator.BinaryXnor: "~^",
+    BinaryOperator.Equality: "==",
+    BinaryOperator.Inequality: "!=",
+    BinaryOperator.CaseEquality: "===",
+    BinaryOperator.CaseInequality: "!==",
+    BinaryOperator.GreaterThanEqual: ">=",
+    BinaryOperator.GreaterThan: ">",
+    BinaryOperator.LessThanEqual: "<=",
+    BinaryOperator.LessThan: "<",
+    BinaryOperator.WildcardEquality: "==?",
+    BinaryOperator.WildcardInequality: "!=?",
+    BinaryOperator.LogicalAnd: "&&",
+    BinaryOperator.LogicalOr: "||",
+    BinaryOperator.LogicalImplication: "->",
+    BinaryOperator.LogicalEquivalence: "<->",
+    BinaryOperator.LogicalShiftLeft: "<<",
+    BinaryOperator.LogicalShiftRight: ">>",
+    BinaryOperator.ArithmeticShiftLeft: "<<<",
+    BinaryOperator.ArithmeticShiftRight: ">>>",
+    BinaryOperator.Power: "**",
 }
 _OF_BOTH = {"+", "-", "*", "/", "%", "&", "|", "^", "~^"}  # as wide as the wider operand
 _OF_LEFT = {"<<", ">>", "<<<", ">>>", "**"}
@@ -132,8 +157,15 @@ class Expressions:
         kind = expression.type
         path = self.names.path(symbol)
         return Reference(
-            span, path, _width(kind), kind.isSigned, self._evaluate(expression) if fixed else None, copyable,
-            name=self._text(span) if outside else path, is_parameter=fixed, is_local=is_local(symbol),
+            span,
+            path,
+            _width(kind),
+            kind.isSigned,
+            self._evaluate(expression) if fixed else None,
+            copyable,
+            name=self._text(span) if outside else path,
+            is_parameter=fixed,
+            is_local=is_local(symbol),
             is_hierarchical=outside,
         )
 
@@ -147,8 +179,9 @@ class Expressions:
         number = None if unknown else int(value)
         if filling:  # '1 is one bit by itself and takes the width of its context
             number = None if number is None else min(number, 1)
-        return Constant(span, key, 1 if filling else kind.bitWidth, kind.isSigned and not filling, number, copyable,
-                        has_x=unknown)
+        return Constant(
+            span, key, 1 if filling else kind.bitWidth, kind.isSigned and not filling, number, copyable, has_x=unknown
+        )
 
     def _unary(self, expression: UnaryExpression) -> Expr:
         operator = _UNARY.get(expression.op)
@@ -156,8 +189,14 @@ class Expressions:
             return self._opaque(expression)  # ++ and -- inside an expression write
         operand = self.lower(expression.operand)
         wide = operator in _WIDE_UNARY
-        return self._operation(expression, operator, (operand,), f"{operator}{operand.key}",
-                               operand.width if wide else 1, signed=wide and operand.signed)
+        return self._operation(
+            expression,
+            operator,
+            (operand,),
+            f"{operator}{operand.key}",
+            operand.width if wide else 1,
+            signed=wide and operand.signed,
+        )
 
     def _binary(self, expression: BinaryExpression) -> Expr:
         operator = _BINARY[expression.op]
@@ -168,24 +207,43 @@ class Expressions:
         elif operator in _OF_LEFT:
             width, signed = left.width, left.signed
         known = _short_circuit(operator, left.constant, right.constant)
-        return self._operation(expression, operator, (left, right), f"({left.key}{operator}{right.key})", width,
-                               signed=signed, known=known)
+        return self._operation(
+            expression, operator, (left, right), f"({left.key}{operator}{right.key})", width, signed=signed, known=known
+        )
 
-    def _operation(self, expression: Expression, operator: str, operands: tuple[Expr, ...], key: str, width: int, *,  # noqa: PLR0913
-                   signed: bool = False, known: int | None = None) -> Expr:
+    def _operation(
+        self,
+        expression: Expression,
+        operator: str,
+        operands: tuple[Expr, ...],
+        key: str,
+        width: int,
+        *,  # noqa: PLR0913
+        signed: bool = False,
+        known: int | None = None,
+    ) -> Expr:
         span, copyable = self._locator.placed(expression.sourceRange)
         if known is None and all(operand.constant is not None for operand in operands):
             known = self._evaluate(expression)
-        return Operation(span, key, width if expression.type.isIntegral else 0, signed, known, copyable,
-                         operator=operator, operands=operands)
+        return Operation(
+            span,
+            key,
+            width if expression.type.isIntegral else 0,
+            signed,
+            known,
+            copyable,
+            operator=operator,
+            operands=operands,
+        )
 
     def _conversion(self, expression: ConversionExpression) -> Expr:
         if expression.isImplicit:
             return self.lower(expression.operand)
         operand = self.lower(expression.operand)
         kind = expression.type
-        return self._operation(expression, "cast", (operand,), f"{kind}'({operand.key})", _width(kind),
-                               signed=kind.isSigned)
+        return self._operation(
+            expression, "cast", (operand,), f"{kind}'({operand.key})", _width(kind), signed=kind.isSigned
+        )
 
     def _conditional(self, expression: ConditionalExpression) -> Expr:
         conditions = expression.conditions
@@ -198,12 +256,20 @@ class Expressions:
         if condition.constant is not None:
             value = then.constant if condition.constant else other.constant
         return Conditional(
-            span, f"({condition.key}?{then.key}:{other.key})",
+            span,
+            f"({condition.key}?{then.key}:{other.key})",
             max(then.width, other.width) if expression.type.isIntegral else 0,
-            then.signed and other.signed, value, copyable, condition=condition, then=then, other=other)
+            then.signed and other.signed,
+            value,
+            copyable,
+            condition=condition,
+            then=then,
+            other=other,
+        )
 
-    def _concatenation(self, expression: ConcatenationExpression, count: int = 1, prefix: str = "",
-                       whole: Expression | None = None) -> Expr:
+    def _concatenation(
+        self, expression: ConcatenationExpression, count: int = 1, prefix: str = "", whole: Expression | None = None
+    ) -> Expr:
         parts = tuple(self.lower(part) for part in expression.operands)
         outer = whole or expression
         span, copyable = self._locator.placed(outer.sourceRange)
@@ -230,8 +296,12 @@ class Expressions:
     def _member(self, expression: MemberAccessExpression) -> Expr:
         return self._select(expression, (), f".{expression.member.name}")
 
-    def _select(self, expression: ElementSelectExpression | RangeSelectExpression | MemberAccessExpression,
-                indices: tuple[Expr, ...], suffix: str) -> Expr:
+    def _select(
+        self,
+        expression: ElementSelectExpression | RangeSelectExpression | MemberAccessExpression,
+        indices: tuple[Expr, ...],
+        suffix: str,
+    ) -> Expr:
         value = self.lower(expression.value)
         span, copyable = self._locator.placed(expression.sourceRange)
         kind = expression.type
@@ -239,8 +309,17 @@ class Expressions:
         bits = place.bits if place is not None and place.exact else None
         root_fixed = all(not isinstance(node, Reference) or node.is_parameter for node in value.walk())
         fixed = root_fixed and all(index.constant is not None for index in indices)
-        return Select(span, f"{value.key}{suffix}", _width(kind), kind.isSigned,
-                      self._evaluate(expression) if fixed else None, copyable, value=value, indices=indices, bits=bits)
+        return Select(
+            span,
+            f"{value.key}{suffix}",
+            _width(kind),
+            kind.isSigned,
+            self._evaluate(expression) if fixed else None,
+            copyable,
+            value=value,
+            indices=indices,
+            bits=bits,
+        )
 
     def _inside(self, expression: InsideExpression) -> Expr:
         operands = (self.lower(expression.left), *(self.lower(item) for item in expression.rangeList))
@@ -250,8 +329,16 @@ class Expressions:
     def _value_range(self, expression: ValueRangeExpression) -> Expr:
         left, right = self.lower(expression.left), self.lower(expression.right)
         span, copyable = self._locator.placed(expression.sourceRange)
-        return Operation(span, f"[{left.key}:{right.key}]", 0, False, None, copyable, operator="[:]",  # noqa: FBT003
-                         operands=(left, right))
+        return Operation(
+            span,
+            f"[{left.key}:{right.key}]",
+            0,
+            False,
+            None,
+            copyable,
+            operator="[:]",  # noqa: FBT003
+            operands=(left, right),
+        )
 
     def _pattern(self, expression: SimpleAssignmentPatternExpression) -> Expr:
         operands = tuple(self.lower(element) for element in expression.elements)
@@ -267,23 +354,39 @@ class Expressions:
         kind = expression.type
         fixed = facts.pure and not facts.hidden_reads and all(a.constant is not None for a in arguments)
         return Call(
-            span, f"{facts.name}({','.join(argument.key for argument in arguments)})", _width(kind), kind.isSigned,
-            self._evaluate(expression) if fixed else None, copyable, function=facts.name, arguments=arguments,
-            hidden_reads=facts.hidden_reads, pure=facts.pure, system=facts.system)
+            span,
+            f"{facts.name}({','.join(argument.key for argument in arguments)})",
+            _width(kind),
+            kind.isSigned,
+            self._evaluate(expression) if fixed else None,
+            copyable,
+            function=facts.name,
+            arguments=arguments,
+            hidden_reads=facts.hidden_reads,
+            pure=facts.pure,
+            system=facts.system,
+        )
 
     def _opaque(self, expression: Expression) -> Expr:
         span, copyable = self._locator.placed(expression.sourceRange)
         kind = expression.type
         reads = tuple(self._reference(name) for name in names_in(expression))
-        return Opaque(span, f"opaque@{span.file}:{span.start}-{span.end}", _width(kind), kind.isSigned, None,
-                      copyable, kind=expression.kind.name, operands=reads)
+        return Opaque(
+            span,
+            f"opaque@{span.file}:{span.start}-{span.end}",
+            _width(kind),
+            kind.isSigned,
+            None,
+            copyable,
+            kind=expression.kind.name,
+            operands=reads,
+        )
 
 
 def names_in(part: Expression | Statement | Symbol) -> list[ValueExpressionBase]:
     """Give every name that an expression, statement or block uses, in source order."""
     found: list[ValueExpressionBase] = []
-    part.visit(lookup_table={
-        ExpressionKind.NamedValue: found.append, ExpressionKind.HierarchicalValue: found.append})
+    part.visit(lookup_table={ExpressionKind.NamedValue: found.append, ExpressionKind.HierarchicalValue: found.append})
     return found
 
 

@@ -32,9 +32,14 @@ def shared_symbols(body: Body) -> frozenset[Symbol]:
 def _processes(body: Body) -> Iterator[set[Symbol]]:
     assigns: list[ContinuousAssignSymbol | PrimitiveInstanceSymbol] = []
     nets: list[NetSymbol] = []
-    body.symbol.visit(lookup_table={
-        SymbolKind.ContinuousAssign: assigns.append, SymbolKind.PrimitiveInstance: assigns.append,
-        SymbolKind.Net: nets.append, SymbolKind.Instance: _skip})
+    body.symbol.visit(
+        lookup_table={
+            SymbolKind.ContinuousAssign: assigns.append,
+            SymbolKind.PrimitiveInstance: assigns.append,
+            SymbolKind.Net: nets.append,
+            SymbolKind.Instance: _skip,
+        }
+    )
     for process in (*body.procedures, *assigns):
         yield {name.symbol for name in names_in(process)}
     for net in nets:

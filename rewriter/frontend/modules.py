@@ -55,17 +55,24 @@ class Lowering:
         blocks = tuple(lower_block(block, expressions, locator, self.texts) for block in clocked)
         written = {target.variable for block in blocks for target in targets(block) if not target.is_local}
         values = {path: s for path, s in names.met().items() if isinstance(s, ValueSymbol) and not is_parameter(s)}
-        in_ports = {port.internalSymbol for port in symbol.portList if isinstance(port, PortSymbol)
-                    and port.internalSymbol is not None}
+        in_ports = {
+            port.internalSymbol
+            for port in symbol.portList
+            if isinstance(port, PortSymbol) and port.internalSymbol is not None
+        }
         analysis = self.elaboration.analysis
         module = Module(
-            key=body.key, definition=symbol.definition.name, instances=tuple(body.instances),
-            parameters=tuple(_parameters(symbol)), blocks=blocks,
+            key=body.key,
+            definition=symbol.definition.name,
+            instances=tuple(body.instances),
+            parameters=tuple(_parameters(symbol)),
+            blocks=blocks,
             variables={path: self.declarations.variable(s, path, is_port=s in in_ports) for path, s in values.items()},
             writers={path: writers_of(values[path], analysis, locator) for path in sorted(written) if path in values},
             clock_uses=self._clock_uses(body, blocks, names),
             drives_clocks=self._drives_clocks(body, clocked, written, names),
-            external_references=self.outside.get(body.key, frozenset()))
+            external_references=self.outside.get(body.key, frozenset()),
+        )
         flops, arrays = count(module, self._read_outside(body, module, names))
         self.flop_bits += flops * len(body.instances)
         self.array_bits += arrays * len(body.instances)
@@ -89,8 +96,9 @@ class Lowering:
         uses = data_uses(body, clocks, self.elaboration.locator)
         return {clocks[symbol]: span for symbol, span in uses.items()}
 
-    def _drives_clocks(self, body: Body, clocked: list[ProceduralBlockSymbol], written: set[str],
-                       names: Names) -> dict[str, Span]:
+    def _drives_clocks(
+        self, body: Body, clocked: list[ProceduralBlockSymbol], written: set[str], names: Names
+    ) -> dict[str, Span]:
         if not clocked:
             return {}
         locator = self.elaboration.locator

@@ -37,7 +37,7 @@ class Names:
     def scope(self, symbol: Symbol) -> str:
         """Give the generate scope of a symbol with its final dot, empty at module level."""
         path = symbol.hierarchicalPath  # of a procedural block: its scope's, for it has no name
-        return f"{path[len(self._prefix):]}." if path.startswith(self._prefix) else ""
+        return f"{path[len(self._prefix) :]}." if path.startswith(self._prefix) else ""
 
     def symbol(self, path: str) -> Symbol | None:
         """Give the symbol at a path that was met before, or that stands at module level; None when unknown."""

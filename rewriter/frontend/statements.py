@@ -66,8 +66,19 @@ from rewriter.model.statement import (
 )
 
 # IEEE 1800-2017 clause 21: they print, and write no variable
-_PRINTING = ("$display", "$write", "$strobe", "$monitor", "$fdisplay", "$fwrite", "$fstrobe", "$fmonitor",
-             "$info", "$warning", "$error")
+_PRINTING = (
+    "$display",
+    "$write",
+    "$strobe",
+    "$monitor",
+    "$fdisplay",
+    "$fwrite",
+    "$fstrobe",
+    "$fmonitor",
+    "$info",
+    "$warning",
+    "$error",
+)
 
 
 class Statements:
@@ -163,9 +174,11 @@ class Statements:
             groups.setdefault(self.whole(source), []).append(statement)
         names = self._expressions.names
         return tuple(
-            LocalDeclaration(span, tuple(names.path(s.symbol) for s in group),
-                             any(s.symbol.initializer is not None for s in group))
-            for span, group in groups.items())
+            LocalDeclaration(
+                span, tuple(names.path(s.symbol) for s in group), any(s.symbol.initializer is not None for s in group)
+            )
+            for span, group in groups.items()
+        )
 
     def _if(self, statement: ConditionalStatement) -> Statement:
         syntax = statement.syntax
@@ -180,8 +193,16 @@ class Statements:
         other = self.lower(statement.ifFalse) if statement.ifFalse is not None else None
         clause = syntax.elseClause
         else_keyword = self.whole(clause.elseKeyword.range) if clause is not None else None
-        return If(span, head, condition, self.lower(statement.ifTrue), other, else_keyword, _text(qualifier),
-                  self._attributes(syntax)[0])
+        return If(
+            span,
+            head,
+            condition,
+            self.lower(statement.ifTrue),
+            other,
+            else_keyword,
+            _text(qualifier),
+            self._attributes(syntax)[0],
+        )
 
     def _attributes(self, syntax: StatementSyntax) -> tuple[Span | None, tuple[str, ...]]:
         attributes = [node for node in syntax.attributes if isinstance(node, AttributeInstanceSyntax)]
@@ -200,8 +221,17 @@ class Statements:
         head = self._between(qualifier or syntax.caseKeyword, syntax.matchesOrInside if inside else syntax.closeParen)
         attributes, names = self._attributes(syntax)
         return Case(
-            span, head, syntax.caseKeyword.rawText, inside, self._expressions.lower(statement.expr),
-            self._items(statement, syntax), self.whole(syntax.endcase.range), _text(qualifier), attributes, names)
+            span,
+            head,
+            syntax.caseKeyword.rawText,
+            inside,
+            self._expressions.lower(statement.expr),
+            self._items(statement, syntax),
+            self.whole(syntax.endcase.range),
+            _text(qualifier),
+            attributes,
+            names,
+        )
 
     def _items(self, statement: CaseStatement, syntax: CaseStatementSyntax) -> tuple[CaseItem, ...]:
         groups = iter(statement.items)
@@ -260,8 +290,14 @@ class Statements:
         head = self._between(syntax.repeatOrWhile, syntax.closeParen)  # pyright: ignore[reportAttributeAccessIssue]
         return self._loop(statement, head, "repeat", (), ())
 
-    def _loop(self, statement: ForLoopStatement | ForeachLoopStatement | RepeatLoopStatement, head: Span, keyword: str,
-              inner: tuple[str, ...], outer: tuple[str, ...]) -> Statement:
+    def _loop(
+        self,
+        statement: ForLoopStatement | ForeachLoopStatement | RepeatLoopStatement,
+        head: Span,
+        keyword: str,
+        inner: tuple[str, ...],
+        outer: tuple[str, ...],
+    ) -> Statement:
         span = self._span(statement)
         enclosing = self._loops
         self._loops = enclosing | frozenset((*inner, *outer))
@@ -305,8 +341,16 @@ class Statements:
         """Lower `x += y`: slang keeps a stand-in for x inside the right side."""
         left = self._expressions.lower(expression.left)
         right = self._expressions.lower(expression.right)
-        return Operation(self._locator.span(expression.sourceRange), f"({left.key}:={right.key})",
-                         left.width, left.signed, None, copyable=False, operator="compound", operands=(left, right))
+        return Operation(
+            self._locator.span(expression.sourceRange),
+            f"({left.key}:={right.key})",
+            left.width,
+            left.signed,
+            None,
+            copyable=False,
+            operator="compound",
+            operands=(left, right),
+        )
 
     def _step(self, statement: ExpressionStatement, expression: UnaryExpression) -> Statement:
         targets = targets_of(expression.operand, self._expressions, self._locator, self._loops)
@@ -314,8 +358,16 @@ class Statements:
             return self._opaque(statement)
         operand = self._expressions.lower(expression.operand)
         operator = STEPS[expression.op]
-        rhs = Operation(self._locator.span(expression.sourceRange), f"({operand.key}{operator})", operand.width,
-                        operand.signed, None, copyable=False, operator=operator, operands=(operand,))
+        rhs = Operation(
+            self._locator.span(expression.sourceRange),
+            f"({operand.key}{operator})",
+            operand.width,
+            operand.signed,
+            None,
+            copyable=False,
+            operator=operator,
+            operands=(operand,),
+        )
         return Assign(self._span(statement), targets, rhs, blocking=True)
 
     def _opaque(self, statement: Bound) -> Statement:

@@ -25,8 +25,9 @@ from rewriter.model.expr import Expr, Reference
 from rewriter.model.statement import Index, Target
 
 
-def targets_of(expression: Expression, expressions: Expressions, locator: Locator,
-               loop_variables: frozenset[str]) -> tuple[Target, ...] | None:
+def targets_of(
+    expression: Expression, expressions: Expressions, locator: Locator, loop_variables: frozenset[str]
+) -> tuple[Target, ...] | None:
     """Give the targets of a left-hand side, None when it has a form that is not understood.
 
     Args:
@@ -61,16 +62,22 @@ def parts_of(expression: Expression) -> Iterator[Expression]:
         yield expression
 
 
-def _target(expression: Expression, expressions: Expressions, locator: Locator,
-            loop_variables: frozenset[str]) -> Target | None:
+def _target(
+    expression: Expression, expressions: Expressions, locator: Locator, loop_variables: frozenset[str]
+) -> Target | None:
     place = extent(expression, expressions.value)
     if place is None:
         return None
     indices = tuple(expressions.lower(index) for index in _indices(expression))
     return Target(
-        variable=expressions.names.path(place.symbol), bits=place.bits, index=_index(indices, loop_variables),
-        unpacked=place.unpacked, span=locator.span(expression.sourceRange), is_local=is_local(place.symbol),
-        indices=indices)
+        variable=expressions.names.path(place.symbol),
+        bits=place.bits,
+        index=_index(indices, loop_variables),
+        unpacked=place.unpacked,
+        span=locator.span(expression.sourceRange),
+        is_local=is_local(place.symbol),
+        indices=indices,
+    )
 
 
 def _indices(expression: Expression) -> Iterator[Expression]:
@@ -96,4 +103,3 @@ def _index(indices: tuple[Expr, ...], loop_variables: frozenset[str]) -> Index:
             return Index.VARIABLE
         kind = Index.LOOP
     return kind
-

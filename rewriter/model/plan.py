@@ -167,10 +167,17 @@ class Settled:
 
 @dataclass(frozen=True)
 class Policy:
-    """What is worth a cell. `min_bits`: fewest bits per cell in one occurrence of its scope."""
+    """What is worth a cell.
+
+    Args:
+        min_bits: fewest bits per cell in one occurrence of its scope.
+        has_falling_cell: the cell map has a cell for falling-edge banks.
+        one_clock_per_variable: leave parts of a variable that would run on several clocks.
+    """
 
     min_bits: int = 4
     has_falling_cell: bool = True
+    one_clock_per_variable: bool = False
 
 
 class Shape(Enum):

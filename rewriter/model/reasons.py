@@ -71,6 +71,12 @@ _PAGES = (
         "Nothing yet; the array keeps its clock.",
     ),
     _page("switched-off", _LEFT, "The user switched gating off here.", "Remove the setting to gate it."),
+    _page(
+        "several-clocks",
+        _LEFT,
+        "Parts of one variable would run on several clocks, and --one-clock-per-variable asks for one.",
+        "Nothing, or gate them all the same by leaving that option out; linters may then warn of several clocks.",
+    ),
     _page("already-gated", _LEFT, "The bank already runs on a gated clock that covers its wake condition.", "Nothing."),
     # refused: not shown to be sound
     _page(

@@ -58,6 +58,8 @@ def choose(settled: Settled, policy: Policy, excluded: Mapping[RegisterId, Reaso
         cell = _cell(wake, proposals)
         cells.append(cell)
         banks.extend(_banks(cell, proposals))
+    if policy.one_clock_per_variable and (apart := _on_several_clocks(banks, refusals)):
+        return choose(settled, policy, {**excluded, **dict.fromkeys(apart, Reason("several-clocks"))})
     banks = _distinctly_named(banks)
     return Plan(tuple(cells), tuple(banks), _block_plans(settled, banks, refusals), tuple(refusals))
 
@@ -171,6 +173,31 @@ def _banks(cell: Cell, proposals: list[Proposal]) -> list[Bank]:
         name = f"{cell.definition}.{cell.scope}{mine[0].register.name}"
         banks.append(Bank(name, cell.id, block, tuple(p.register for p in mine), mine, mine[0].method))
     return banks
+
+
+def _on_several_clocks(banks: list[Bank], refusals: list[Refusal]) -> tuple[RegisterId, ...]:
+    """Find gated registers whose variable would have other parts, or other generate copies, on another clock."""
+    clocks: dict[tuple[str, str], set[str]] = {}
+    for register, clock in [
+        *((register, bank.cell) for bank in banks for register in bank.registers),
+        *((refusal.register, "") for refusal in refusals),
+    ]:
+        for part in register.parts:
+            clocks.setdefault((register.block.definition, part.variable), set()).add(clock)
+    return tuple(
+        proposal.register
+        for bank in banks
+        for proposal in bank.proposals
+        if any(len(clocks[bank.block.definition, part.variable]) > 1 for part in proposal.register.parts)
+        or _copied_over(proposal)
+    )
+
+
+def _copied_over(proposal: Proposal) -> bool:
+    """Say whether the copies of a generate loop, each with a cell, write parts of a variable outside the loop."""
+    outside = any(not part.variable.startswith(proposal.scope) for part in proposal.register.parts)
+    scopes = {(o.module, o.scope) for o in proposal.occurrences}
+    return outside and len(scopes) > len({o.module for o in proposal.occurrences})
 
 
 def _distinctly_named(banks: list[Bank]) -> list[Bank]:
