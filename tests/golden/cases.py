@@ -3,7 +3,8 @@
 input.sv | input.v      `// expect: REGISTER gated|left|refused [reason][: part of the detail]` lines say what must
                         come out, whatever the golden files say
 args                    further arguments, one a line: `{case}` is the folder, `{cells}` a wrapper of ours;
-                        --off, --cell-map, --min-bits, --test-pin and --test-port are options of the run
+                        --prove asks the engine; --off, --cell-map, --min-bits, --test-pin, --test-port as on the
+                        command line
 expected.sv | .v        the rewritten input (written by pytest --update, then reviewed)
 expected.json           every register with its verdict
 """
@@ -78,7 +79,7 @@ class Case:
         return [a.split("=", 1)[1] for a in self.arguments if a.startswith(f"--{name}=")]
 
     def job(self, arguments: tuple[str, ...]) -> flow.Job:
-        """Make the job of the case over other arguments; no engine is asked."""
+        """Make the job of the case over other arguments."""
         return flow.Job(
             arguments,
             load_cell_map(next(iter(self.option("cell-map")), "behavioural")),
@@ -86,12 +87,12 @@ class Case:
             test_port=next(iter(self.option("test-port")), "test_en"),
             test_pins=tuple(_pin(text) for text in self.option("test-pin")),
             off=tuple(self.option("off")),
-            prove=False,
-            allow_unproved=True,
+            prove="--prove" in self.arguments,
+            allow_unproved="--prove" not in self.arguments,
         )
 
 
-_OWN = ("--off=", "--cell-map=", "--min-bits=", "--test-pin=", "--test-port=")
+_OWN = ("--prove", "--off=", "--cell-map=", "--min-bits=", "--test-pin=", "--test-port=")
 
 
 def all_cases() -> list[Case]:

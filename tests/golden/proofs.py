@@ -33,8 +33,9 @@ def prove_all(pairs: Sequence[Pair], cells: dict[str, str], folder: Path) -> Pro
                 (folder / name).write_text(text, encoding="utf-8")
                 files.append(str(folder / name))
         sides.append((str(top), *files, "--top", TOP, "--timescale", "1ns/1ps"))
-    gold, gate_source = (frontend.read(side).source for side in sides)
-    return prove(ProofJob(gold, gate_source, TOP, cells, "test_en", limits=Limits(20, 300)), lambda _: None)
+    gold, gate_design = (frontend.read(side) for side in sides)
+    job = ProofJob(gold.source, gate_design.source, TOP, cells, "test_en", limits=Limits(20, 300), stubs=gold.stubs)
+    return prove(job, lambda _: None)
 
 
 def _top(devices: Sequence[Device], *, gate: bool) -> str:

@@ -1,0 +1,19 @@
+// expect: moth_q gated
+// The child's rising edge is the parent's falling one; its wake register runs on the other edge: half a cycle is enough.
+module moth_trap (
+    input  logic       clk, lure,
+    input  logic [7:0] wing,
+    output logic [7:0] moth_q
+);
+    always_ff @(posedge clk) if (lure) moth_q <= wing;
+endmodule
+module moth_field (
+    input  logic       clk, dusk,
+    input  logic [7:0] wing,
+    output logic [7:0] moth_q
+);
+    logic dusk_q;
+    wire  clk_n = ~clk;
+    always_ff @(posedge clk) dusk_q <= dusk;
+    moth_trap u_trap (.clk(clk_n), .lure(dusk_q), .wing(wing), .moth_q(moth_q));
+endmodule
