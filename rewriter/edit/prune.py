@@ -14,6 +14,7 @@ class Pruner:
 
     Args:
         keep: for statements without branches (assignments, tasks).
+        stands: empty statements that must stay (a macro that means something in another build).
         holds: blocks that must stay though nothing in them is kept (text of macros and directives).
 
     Where a branch becomes empty, `unique`, `full_case` and the like go: the promise was made for all branches, and
@@ -22,6 +23,7 @@ class Pruner:
 
     keep: Callable[[Statement], bool]
     holds: Callable[[Block], bool] = lambda _: False
+    stands: Callable[[Empty], bool] = lambda _: False
 
     def prune(self, statement: Statement, *, else_follows: bool = False) -> Statement | None:
         """Give the statement without what is not kept; None when nothing is.
@@ -43,7 +45,7 @@ class Pruner:
                 body = self.prune(statement.body, else_follows=else_follows)
                 return replace(statement, body=body) if body else None
             case Empty():
-                return None
+                return statement if self.stands(statement) else None
             case _:
                 return statement if self.keep(statement) else None
 
@@ -62,16 +64,16 @@ class Pruner:
 
     def _case(self, statement: Case) -> Case | None:
         items = tuple(replace(item, body=self.prune(item.body) or Empty(item.body.span)) for item in statement.items)
-        if all(isinstance(item.body, Empty) for item in items):
+        if all(self._idle(item) for item in items):
             return None
-        needed = tuple(_needed_items(statement, items))
-        whole = all(
-            isinstance(item.body, Empty) == isinstance(old.body, Empty)
-            for item, old in zip(items, statement.items, strict=True)
-        )
+        needed = tuple(_needed_items(statement, items, self._idle))
+        whole = all(self._idle(item) == self._idle(old) for item, old in zip(items, statement.items, strict=True))
         if whole and len(needed) == len(items):
             return replace(statement, items=items)
         return replace(statement, items=needed, qualifier="", attributes=None, attribute_names=())
+
+    def _idle(self, item: CaseItem) -> bool:
+        return isinstance(item.body, Empty) and not self.stands(item.body)
 
 
 def _lost_branch(old: Statement, new: Statement | None) -> bool:
@@ -82,13 +84,13 @@ def _lost_branch(old: Statement, new: Statement | None) -> bool:
     return emptied or (old.other is not None and _lost_branch(old.other, new.other))
 
 
-def _needed_items(case: Case, items: tuple[CaseItem, ...]) -> Iterator[CaseItem]:
+def _needed_items(case: Case, items: tuple[CaseItem, ...], idle: Callable[[CaseItem], bool]) -> Iterator[CaseItem]:
     """Drop empty items whose selection cannot be told from selecting nothing."""
-    default_lives = any(item.is_default and not isinstance(item.body, Empty) for item in items)
-    last = max(i for i, item in enumerate(items) if not isinstance(item.body, Empty))
+    default_lives = any(item.is_default and not idle(item) for item in items)
+    last = max(i for i, item in enumerate(items) if not idle(item))
     literal = case.keyword == "case" and not case.inside and _distinct_literals(items)
     for i, item in enumerate(items):
-        empty = isinstance(item.body, Empty) and not item.is_default
+        empty = idle(item) and not item.is_default
         if empty and not default_lives and (i > last or literal):
             continue
         yield item

@@ -23,7 +23,7 @@ from rewriter.edit.text import COMMENT, CannotEditError, Page, renamed, words
 from rewriter.model.design import ClockedBlock
 from rewriter.model.plan import Bank
 from rewriter.model.source import Span
-from rewriter.model.statement import Assign, Block, Opaque, Statement
+from rewriter.model.statement import Assign, Block, Empty, Opaque, Statement
 
 _CONDITIONAL = re.compile(r"`(?:ifdef|ifndef|elsif|else|endif)\b")
 _GROUP_ENDS = re.compile(r"[ \t]*(?:end(?:case)?\b|else\b|//|/\*|\r?\n|\Z)")
@@ -99,7 +99,7 @@ class Splitter:
                 return not all(target.variable in idle for target in statement.targets)
             return not any(self._writes(bank, statement) for bank in self.banks)
 
-        return Pruner(stays, self._holds).prune(self.block.body)
+        return Pruner(stays, self._holds, self._stands).prune(self.block.body)
 
     def _matters(self, statement: Statement) -> bool:
         match statement:
@@ -109,6 +109,8 @@ class Splitter:
                 return not all(target.is_local for target in statement.targets)
             case Block():
                 return self._holds(statement)
+            case Empty():
+                return self._stands(statement)
             case _:
                 return False
 
@@ -240,6 +242,10 @@ class Splitter:
 
     def _writes(self, bank: Bank, statement: Assign) -> bool:
         return any(statement.span in proposal.writes for proposal in bank.proposals)
+
+    def _stands(self, statement: Empty) -> bool:
+        """Say whether an empty statement is the text of a macro, which another build may fill."""
+        return "`" in self.page.text(statement.span)
 
     def _holds(self, block: Block) -> bool:
         """Say whether text of macros or directives stands right inside a block."""
