@@ -8,7 +8,7 @@ from rewriter.logic.blast import Bit, Word, bit_and, bit_mux
 from rewriter.logic.netlist import Cell
 from rewriter.logic.state import Register, WritePort, loads_constant, memory_shape, step, write_ports
 from rewriter.prove.obligation import Obligation, unequal
-from rewriter.prove.pair import GATING, Clock, Gating, Shared, Side, awake, follow
+from rewriter.prove.pair import GATING, Clock, Gating, Shared, Side, UnknownClockError, awake, follow
 
 
 @dataclass(frozen=True)
@@ -89,7 +89,12 @@ class Comparison:
             self._latch(variable, place, gold, gate)
             return
         above = self._clock(self.gold, gold)
-        below = self._clock(self.gate, gate)
+        try:
+            below = self._clock(self.gate, gate)
+        except UnknownClockError:
+            # Not one of our cells: logic makes this clock, where the original has a plain one.
+            self.faults.append(Fault(variable, "its clock is made by logic that can be x"))
+            return
         bank = self.banks.of(below.cells)
         bank.add(variable)
         fault = self._clock_fault(variable, above, below)

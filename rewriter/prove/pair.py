@@ -228,6 +228,10 @@ def _keys(found: list[Register], partner: Side | None, side: str) -> dict[int, K
     return keys
 
 
+class UnknownClockError(UnsupportedCellError):
+    """A register's clock can be x, so that its edges are not known."""
+
+
 @dataclass(frozen=True)
 class Clock:
     """A register's clock, followed through our cells.
@@ -248,7 +252,7 @@ class Clock:
 def follow(side: Side, clock: Bit, *, rising: bool) -> Clock:
     """Follow a clock net up through our cells to its root."""
     if clock[1] != FALSE:
-        raise UnsupportedCellError("a clock that can be x")
+        raise UnknownClockError("a clock that can be x")
     lit, fits = clock[0], True
     found: list[Gating] = []
     while True:
@@ -260,7 +264,7 @@ def follow(side: Side, clock: Bit, *, rising: bool) -> Clock:
         found.append(gating)
         fits = fits and gating.rising == rising
         if gating.clock[1] != FALSE:
-            raise UnsupportedCellError("a clock that can be x")
+            raise UnknownClockError("a clock that can be x")
         lit = gating.clock[0]
 
 

@@ -365,3 +365,10 @@ def test_text_that_the_engine_cannot_read() -> None:
     ((where, message),) = result.unread
     assert where == "lamp"
     assert "/design/harbour.sv:2" in message
+
+
+def test_a_cell_without_its_latch_is_disproved_for_its_register() -> None:
+    gate = GATE.replace(icg("dim", "set"), "wire gclk_dim = clk & (set | test_en === 1'b1);")
+    assert gate != GATE
+    found = mismatch(answer(GOLD, gate), "dim")
+    assert "clock" in found.detail
