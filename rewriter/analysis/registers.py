@@ -7,7 +7,7 @@ from itertools import pairwise
 
 import networkx as nx
 
-from rewriter.model.design import ClockedBlock, Module
+from rewriter.model.design import ClockedBlock
 from rewriter.model.plan import Part
 from rewriter.model.source import SourceText, Span
 from rewriter.model.statement import Assign, Index, Opaque, Target
@@ -63,7 +63,7 @@ def plain_scope(scope: str) -> str:
     return ".".join(piece.split("[", 1)[0] for piece in scope.split("."))
 
 
-def groups(block: ClockedBlock, module: Module, source: SourceText) -> tuple[Group, ...]:
+def groups(block: ClockedBlock, source: SourceText) -> tuple[Group, ...]:
     """Partition everything the block writes with `<=` into registers, in order of first writing."""
     assigns = [s for s in block.body.walk() if isinstance(s, Assign) and not s.blocking]
     graph: nx.Graph[tuple[str, tuple[int, int]]] = nx.Graph()

@@ -8,7 +8,7 @@ from contextlib import contextmanager
 import click
 from rich.console import Console
 
-from rewriter.model.design import Warning as Note
+from rewriter.model.design import Note
 from rewriter.model.errors import StillclockError
 
 

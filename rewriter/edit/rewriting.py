@@ -9,7 +9,7 @@ from rewriter.edit.options import EditOptions
 from rewriter.edit.site import Site, without
 from rewriter.edit.text import CannotEditError
 from rewriter.edit.thread import Threads, thread
-from rewriter.model.design import Design, Warning  # noqa: A004 (the word users see)
+from rewriter.model.design import Design, Note
 from rewriter.model.plan import BlockId, Plan, RegisterId
 from rewriter.model.reasons import Reason
 from rewriter.model.rewrite import Edit, FileChange, Rewrite
@@ -88,13 +88,12 @@ def _rewrite(design: Design, attempt: _Attempt, options: EditOptions, excluded: 
     )
 
 
-def _generated(design: Design, plan: Plan) -> list[Warning]:
+def _generated(design: Design, plan: Plan) -> list[Note]:
     """Warn about files that say they are generated: the next generation would undo the edit."""
     names = sorted({cell.definition for cell in plan.cells if design.definitions[cell.definition].generated})
     files = sorted({design.definitions[name].span.file for name in names})
     return [
-        Warning("this file says that it is generated; the rewrite is lost when it is made again", path)
-        for path in files
+        Note("this file says that it is generated; the rewrite is lost when it is made again", path) for path in files
     ]
 
 

@@ -9,7 +9,7 @@ from rewriter.edit.obstacles import Link, Obstacles, bound_from_outside, links_o
 from rewriter.edit.options import EditOptions
 from rewriter.edit.ports import NewPort, connection_edits, port_edits
 from rewriter.edit.text import Page
-from rewriter.model.design import Design, Warning  # noqa: A004 (the word users see)
+from rewriter.model.design import Design, Note
 from rewriter.model.errors import UserError
 from rewriter.model.reasons import Reason
 from rewriter.model.rewrite import Edit, TestPin
@@ -35,7 +35,7 @@ class Threads:
     ports: Mapping[str, str]
     edits: tuple[Edit, ...]
     blocked: Mapping[str, Reason]
-    warnings: tuple[Warning, ...]
+    warnings: tuple[Note, ...]
 
 
 def thread(design: Design, holders: Iterable[str], options: EditOptions) -> Threads:
@@ -112,11 +112,11 @@ class _Threader:
                 page = self._page(link.instance.parentheses)
                 yield from connection_edits(page, link.instance, port, expression[link.parent])
 
-    def _warnings(self, reached: frozenset[str]) -> Iterator[Warning]:
+    def _warnings(self, reached: frozenset[str]) -> Iterator[Note]:
         for name in sorted(reached - self.pins.keys()):
             for link in self.links.get(name, ()):
                 if reason := self.obstacles.passing(link):
-                    yield Warning(
+                    yield Note(
                         f"{link.parent} is not under the top and cannot pass the test override to "
                         f"{link.instance.name} ({reason.word})",
                         self.obstacles.place(link.instance.span),
@@ -124,7 +124,7 @@ class _Threader:
                     )
         for pin in self.options.test_pins:
             if pin.definition not in reached:
-                yield Warning(f"the test pin {pin.definition}.{pin.port} is not needed: no cell stands below it")
+                yield Note(f"the test pin {pin.definition}.{pin.port} is not needed: no cell stands below it")
 
     def _page(self, span: Span) -> Page:
         return Page(self.design.source.by_path[span.file])

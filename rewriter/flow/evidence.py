@@ -3,7 +3,7 @@
 import re
 from collections.abc import Iterator, Mapping
 
-from rewriter.model.design import Warning as Note
+from rewriter.model.design import Note
 from rewriter.model.evidence import CellEvidence, Mismatch, ProofResult
 from rewriter.model.plan import Bank, BlockId, RegisterId
 from rewriter.model.reasons import PAGES, EvidenceKind, Reason, Verdict

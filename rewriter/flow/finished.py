@@ -8,8 +8,7 @@ from typing import Any
 from rewriter import frontend
 from rewriter.flow.job import Progress
 from rewriter.model.cells import WRAPPERS
-from rewriter.model.design import Design
-from rewriter.model.design import Warning as Note
+from rewriter.model.design import Design, Note
 from rewriter.model.errors import UserError
 from rewriter.model.evidence import Limits, ProofJob, ProofResult
 from rewriter.prove import prove

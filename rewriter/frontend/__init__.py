@@ -14,7 +14,7 @@ from rewriter.frontend.definitions import Definitions
 from rewriter.frontend.drivers import LazyDrivers
 from rewriter.frontend.elaboration import Elaboration, Parsed, parse
 from rewriter.frontend.modules import Lowering
-from rewriter.model.design import Design, Warning  # noqa: A004 (the word users see)
+from rewriter.model.design import Design, Note
 from rewriter.model.source import RtlSource
 
 __all__ = ["elaborate", "open_up", "read"]
@@ -73,7 +73,7 @@ def _lower(elaboration: Elaboration) -> Design:
     unknown = {box.definitionName: box for body in bodies.values() for box in body.unknown}
     boxes = black_boxes(bodies.values(), lowering.drivers, elaboration.analysis) if unknown else ()
     warnings = tuple(
-        Warning(
+        Note(
             f"module {name} is unknown and stays a black box",
             elaboration.place(box.location),
             "give its source, or a stub, if it matters",

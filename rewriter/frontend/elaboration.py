@@ -21,7 +21,7 @@ from rewriter.frontend.arguments import configure, open_arguments, slang_words
 from rewriter.frontend.command_files import Word, read_bytes
 from rewriter.frontend.diagnostics import captured_stderr, check_version
 from rewriter.frontend.places import Locator
-from rewriter.model.design import Warning  # noqa: A004 (the word users see)
+from rewriter.model.design import Note
 from rewriter.model.errors import CompileError, UserError
 from rewriter.model.source import RtlSource, SourceText
 
@@ -99,9 +99,9 @@ class Elaboration:
         return self._analysis
 
     @property
-    def warnings(self) -> tuple[Warning, ...]:
+    def warnings(self) -> tuple[Note, ...]:
         """Give what slang warned of while it read the arguments."""
-        return tuple(Warning(text) for text in self.parsed.warnings)
+        return tuple(Note(text) for text in self.parsed.warnings)
 
     def place(self, location: pyslang.SourceLocation) -> str:
         """Write a location as `file:line:col`."""

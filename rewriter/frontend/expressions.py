@@ -211,14 +211,14 @@ class Expressions:
             expression, operator, (left, right), f"({left.key}{operator}{right.key})", width, signed=signed, known=known
         )
 
-    def _operation(
+    def _operation(  # noqa: PLR0913 (the fields of the node)
         self,
         expression: Expression,
         operator: str,
         operands: tuple[Expr, ...],
         key: str,
         width: int,
-        *,  # noqa: PLR0913
+        *,
         signed: bool = False,
         known: int | None = None,
     ) -> Expr:
@@ -332,11 +332,11 @@ class Expressions:
         return Operation(
             span,
             f"[{left.key}:{right.key}]",
-            0,
-            False,
-            None,
-            copyable,
-            operator="[:]",  # noqa: FBT003
+            width=0,
+            signed=False,
+            constant=None,
+            copyable=copyable,
+            operator="[:]",
             operands=(left, right),
         )
 

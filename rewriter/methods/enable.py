@@ -58,7 +58,7 @@ class _Finder:
     def outcomes(self) -> Iterator[Outcome]:
         """Yield an outcome per register, and an anchor when a part of the block must stay."""
         block_reason = traps.of_block(self.context)
-        for group in groups(self.block, self.context.module, self.source):
+        for group in groups(self.block, self.source):
             yield self.judge(group, block_reason)
         yield from self.blocking_registers()
         if self.anchored():

@@ -323,7 +323,7 @@ def _written(name: str) -> str:
 
 
 @dataclass(frozen=True)
-class Warning:  # noqa: A001 (the word users see)
+class Note:
     """A message that does not stop the run; `place` is `file:line:col` or empty."""
 
     message: str
@@ -341,7 +341,7 @@ class Design:
     definitions: Mapping[str, Definition]
     black_boxes: tuple[BlackBox, ...]
     drivers: Drivers
-    warnings: tuple[Warning, ...] = ()
+    warnings: tuple[Note, ...] = ()
     flop_bits: int = 0  # bits written by clocked blocks, over all instances, arrays by variable index excluded
     array_bits: int = 0  # bits of arrays written by a variable index, over all instances
 

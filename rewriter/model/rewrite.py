@@ -3,7 +3,7 @@
 from collections.abc import Mapping
 from dataclasses import dataclass
 
-from rewriter.model.design import Warning
+from rewriter.model.design import Note
 from rewriter.model.plan import RegisterId
 from rewriter.model.reasons import Reason
 from rewriter.model.source import Span
@@ -74,7 +74,7 @@ class Rewrite:
     cell_files: Mapping[str, str]
     test_ports: Mapping[str, str]
     excluded: Mapping[RegisterId, Reason]
-    warnings: tuple[Warning, ...] = ()
+    warnings: tuple[Note, ...] = ()
 
 
 @dataclass(frozen=True)

@@ -3,8 +3,7 @@
 from collections.abc import Mapping
 from dataclasses import dataclass, field
 
-from rewriter.model.design import Design
-from rewriter.model.design import Warning as Note
+from rewriter.model.design import Design, Note
 from rewriter.model.evidence import CellEvidence, ProofResult
 from rewriter.model.plan import Bank, Plan, RegisterId, Settled
 from rewriter.model.reasons import EvidenceKind, Reason

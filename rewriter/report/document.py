@@ -6,7 +6,7 @@ from dataclasses import asdict
 from typing import Any
 
 from rewriter import __version__
-from rewriter.model.design import Warning as Note
+from rewriter.model.design import Note
 from rewriter.model.evidence import CellEvidence, Counterexample, Mismatch, ProofResult
 from rewriter.model.rewrite import Edit, Rewrite, TestPin
 from rewriter.model.run import Run

@@ -15,7 +15,7 @@ _NAMES = ("a", "b", "c", "d")
 
 
 def atom(name: str, constant: int | None = None) -> Atom:
-    return Atom(Reference(Span("t.sv", 0, 1), name, 1, False, constant, True, name=name))
+    return Atom(Reference(Span("t.sv", 0, 1), name, 1, signed=False, constant=constant, copyable=True, name=name))
 
 
 def text(formula: Formula) -> str:

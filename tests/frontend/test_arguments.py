@@ -7,8 +7,10 @@ import pytest
 from rewriter.frontend import elaborate, open_up, read
 from rewriter.model.source import RtlSource, SourceText
 
-COUNTER = ("module m #(parameter int W = 4, parameter logic [7:0] S = 8'h11)(input clk, output reg [W-1:0] q);\n"
-           "always @(posedge clk) q <= q + `STEP;\nendmodule\n")
+COUNTER = (
+    "module m #(parameter int W = 4, parameter logic [7:0] S = 8'h11)(input clk, output reg [W-1:0] q);\n"
+    "always @(posedge clk) q <= q + `STEP;\nendmodule\n"
+)
 
 
 @pytest.fixture
@@ -28,8 +30,18 @@ def test_files_and_include_folders_become_absolute(tree: Path) -> None:
     assert source.by_path[str(tree / "rtl" / "m.sv")].data.endswith(b"endmodule\n")
 
 
-@pytest.mark.parametrize("form", [["+incdir+inc"], ["-I", "inc"], ["-Iinc"], ["--include-directory", "inc"],
-                                  ["--include-directory=inc"], ["+incdir+nothing+inc"], ["-I", "nothing,inc"]])
+@pytest.mark.parametrize(
+    "form",
+    [
+        ["+incdir+inc"],
+        ["-I", "inc"],
+        ["-Iinc"],
+        ["--include-directory", "inc"],
+        ["--include-directory=inc"],
+        ["+incdir+nothing+inc"],
+        ["-I", "nothing,inc"],
+    ],
+)
 def test_every_way_to_name_an_include_folder(tree: Path, form: list[str]) -> None:
     assert read(["rtl/m.sv", *form], str(tree)).flop_bits == 4
 
@@ -68,10 +80,29 @@ def test_quotes_of_parameters_survive(tree: Path) -> None:
 
 
 def test_other_options_pass_verbatim_and_in_order(tree: Path) -> None:
-    design = read(["--std", "1800-2017", "rtl/m.sv", "--allow-use-before-declare", "-Iinc", "--timescale=1ns/1ps",
-                   "-Wno-unused", "--max-generate-steps", "5000"], str(tree))
-    assert design.source.options == ("--std", "1800-2017", "--allow-use-before-declare", "--timescale=1ns/1ps",
-                                     "-Wno-unused", "--max-generate-steps", "5000")
+    design = read(
+        [
+            "--std",
+            "1800-2017",
+            "rtl/m.sv",
+            "--allow-use-before-declare",
+            "-Iinc",
+            "--timescale=1ns/1ps",
+            "-Wno-unused",
+            "--max-generate-steps",
+            "5000",
+        ],
+        str(tree),
+    )
+    assert design.source.options == (
+        "--std",
+        "1800-2017",
+        "--allow-use-before-declare",
+        "--timescale=1ns/1ps",
+        "-Wno-unused",
+        "--max-generate-steps",
+        "5000",
+    )
     assert design.source.files == (str(tree / "rtl" / "m.sv"),)
     assert design.definitions["m"].timescale == "1ns/1ps"
 
@@ -110,8 +141,10 @@ def test_opened_up_arguments_read_the_same_from_anywhere(tree: Path, monkeypatch
 def test_texts_count_and_not_the_disk(tree: Path) -> None:
     source = read(["rtl/m.sv", "+incdir+inc"], str(tree)).source
     path = str(tree / "rtl" / "m.sv")
-    changed = source.with_texts({path: source.by_path[path].data.replace(b"int W = 4", b"int W = 9")},
-                                (SourceText(str(tree / "rtl" / "new.sv"), b"module fresh; endmodule\n"),))
+    changed = source.with_texts(
+        {path: source.by_path[path].data.replace(b"int W = 4", b"int W = 9")},
+        (SourceText(str(tree / "rtl" / "new.sv"), b"module fresh; endmodule\n"),),
+    )
     design = elaborate(changed)
     assert design.flop_bits == 9
     assert "fresh" in design.definitions

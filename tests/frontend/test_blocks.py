@@ -8,17 +8,31 @@ from tests.frontend.conftest import Reader, Sample
 
 
 def block(sample: Reader, text: str, before: str = "", declared: str = "", name: str = "t.sv") -> Sample:
-    return sample(f"{before}\nmodule m(input clk, rst_n, rst, en, input [3:0] d, output reg [3:0] q, r);\n{declared}\n"
-                  f"{text}\nendmodule\n", name=name)
+    return sample(
+        f"{before}\nmodule m(input clk, rst_n, rst, en, input [3:0] d, output reg [3:0] q, r);\n{declared}\n"
+        f"{text}\nendmodule\n",
+        name=name,
+    )
 
 
-@pytest.mark.parametrize("events,test,high", [
-    ("negedge rst_n", "!rst_n", False), ("negedge rst_n", "~rst_n", False), ("negedge rst_n", "rst_n == 0", False),
-    ("negedge rst_n", "rst_n == 1'b0", False), ("negedge rst_n", "1'b0 == rst_n", False),
-    ("negedge rst_n", "rst_n != 1", False), ("negedge rst_n", "rst_n !== 1'b1", False),
-    ("posedge rst", "rst", True), ("posedge rst", "(rst)", True), ("posedge rst", "rst == 1'b1", True),
-    ("posedge rst", "rst != 1'b0", True), ("posedge rst", "!(!rst)", True), ("posedge rst", "!(rst == 0)", True),
-])
+@pytest.mark.parametrize(
+    "events,test,high",
+    [
+        ("negedge rst_n", "!rst_n", False),
+        ("negedge rst_n", "~rst_n", False),
+        ("negedge rst_n", "rst_n == 0", False),
+        ("negedge rst_n", "rst_n == 1'b0", False),
+        ("negedge rst_n", "1'b0 == rst_n", False),
+        ("negedge rst_n", "rst_n != 1", False),
+        ("negedge rst_n", "rst_n !== 1'b1", False),
+        ("posedge rst", "rst", True),
+        ("posedge rst", "(rst)", True),
+        ("posedge rst", "rst == 1'b1", True),
+        ("posedge rst", "rst != 1'b0", True),
+        ("posedge rst", "!(!rst)", True),
+        ("posedge rst", "!(rst == 0)", True),
+    ],
+)
 def test_asynchronous_resets(sample: Reader, events: str, test: str, high: bool) -> None:  # noqa: FBT001
     found = block(sample, f"always @(posedge clk or {events}) begin if ({test}) q <= 0; else if (en) q <= d; end")
     clock = found.block.clock
@@ -38,10 +52,13 @@ def test_the_clock_may_stand_last(sample: Reader) -> None:
 
 
 def test_two_resets_in_a_chain_and_in_one_test(sample: Reader) -> None:
-    chain = block(sample, "always @(posedge clk or negedge rst_n or posedge rst)\n"
-                          "if (!rst_n) q <= 0; else if (rst) q <= 1; else q <= d;")
-    joined = block(sample, "always @(posedge clk or negedge rst_n or posedge rst) if (!rst_n || rst) q <= 0; "
-                           "else q <= d;")
+    chain = block(
+        sample,
+        "always @(posedge clk or negedge rst_n or posedge rst)\nif (!rst_n) q <= 0; else if (rst) q <= 1; else q <= d;",
+    )
+    joined = block(
+        sample, "always @(posedge clk or negedge rst_n or posedge rst) if (!rst_n || rst) q <= 0; else q <= d;"
+    )
     for found in (chain, joined):
         assert [(r.event.signal.key, r.active_high) for r in found.block.resets] == [("rst_n", False), ("rst", True)]
         assert found.block.synchronous is not None
@@ -49,11 +66,16 @@ def test_two_resets_in_a_chain_and_in_one_test(sample: Reader) -> None:
 
 
 def test_a_declaration_may_stand_before_the_reset(sample: Reader) -> None:
-    found = block(sample, "always @(posedge clk or negedge rst_n) begin : b integer i; if (!rst_n) q <= 0; else\n"
-                          "for (i = 0; i < 4; i = i + 1) q[i] <= d[i]; end")
+    found = block(
+        sample,
+        "always @(posedge clk or negedge rst_n) begin : b integer i; if (!rst_n) q <= 0; else\n"
+        "for (i = 0; i < 4; i = i + 1) q[i] <= d[i]; end",
+    )
     assert len(found.block.resets) == 1
-    other = block(sample, "always @(posedge clk or negedge rst_n) begin : b automatic int i = d; if (!rst_n) q <= 0;\n"
-                          "else q <= i; end")
+    other = block(
+        sample,
+        "always @(posedge clk or negedge rst_n) begin : b automatic int i = d; if (!rst_n) q <= 0;\nelse q <= i; end",
+    )
     assert other.reasons() == ("clock-unclear",)
 
 
@@ -62,18 +84,21 @@ def test_a_reset_alone_leaves_nothing_synchronous(sample: Reader) -> None:
     assert found.block.synchronous is None
 
 
-@pytest.mark.parametrize("text", [
-    "always @(posedge clk or posedge rst) if (!rst) q <= 0; else q <= d;",
-    "always @(posedge clk or negedge rst_n) if (rst_n) q <= 0; else q <= d;",
-    "always @(posedge clk or posedge rst) q <= d;",
-    "always @(posedge clk or posedge rst) begin r <= d; if (rst) q <= 0; else q <= d; end",
-    "always @(posedge clk or posedge rst) if (rst && en) q <= 0; else q <= d;",
-    "always @(posedge clk or negedge clk) q <= d;",
-    "always @(edge clk) q <= d;",
-    "always @(posedge clk or en) q <= d;",
-    "always @(posedge clk or posedge rst iff en) if (rst) q <= 0; else q <= d;",
-    "always @(posedge clk or posedge rst) if (rst || en) q <= 0; else q <= d;",
-])
+@pytest.mark.parametrize(
+    "text",
+    [
+        "always @(posedge clk or posedge rst) if (!rst) q <= 0; else q <= d;",
+        "always @(posedge clk or negedge rst_n) if (rst_n) q <= 0; else q <= d;",
+        "always @(posedge clk or posedge rst) q <= d;",
+        "always @(posedge clk or posedge rst) begin r <= d; if (rst) q <= 0; else q <= d; end",
+        "always @(posedge clk or posedge rst) if (rst && en) q <= 0; else q <= d;",
+        "always @(posedge clk or negedge clk) q <= d;",
+        "always @(edge clk) q <= d;",
+        "always @(posedge clk or en) q <= d;",
+        "always @(posedge clk or posedge rst iff en) if (rst) q <= 0; else q <= d;",
+        "always @(posedge clk or posedge rst) if (rst || en) q <= 0; else q <= d;",
+    ],
+)
 def test_an_unclear_clock_is_a_trap(sample: Reader, text: str) -> None:
     found = block(sample, text)
     assert found.block.clock is None
@@ -103,27 +128,39 @@ def test_combinational_and_latch_blocks_are_not_lowered(sample: Reader) -> None:
 
 
 def test_generate_copies_have_scopes(sample: Reader) -> None:
-    found = block(sample, "for (genvar i = 0; i < 2; i++) begin : g logic x;\n"
-                          "always_ff @(posedge clk) if (d[i]) x <= en; end\n"
-                          "if (0) begin : no always_ff @(posedge clk) q <= 0; end else begin : yes logic y;\n"
-                          "always_ff @(posedge clk) y <= en; end")
+    found = block(
+        sample,
+        "for (genvar i = 0; i < 2; i++) begin : g logic x;\n"
+        "always_ff @(posedge clk) if (d[i]) x <= en; end\n"
+        "if (0) begin : no always_ff @(posedge clk) q <= 0; end else begin : yes logic y;\n"
+        "always_ff @(posedge clk) y <= en; end",
+    )
     assert [b.scope for b in found.top.blocks] == ["g[0].", "g[1].", "yes."]
     assert [a.targets[0].variable for b in found.top.blocks for a in b.body.walk() if isinstance(a, Assign)] == [
-        "g[0].x", "g[1].x", "yes.y"]
+        "g[0].x",
+        "g[1].x",
+        "yes.y",
+    ]
     assert not any(b.unbraced for b in found.top.blocks)
 
 
 def test_a_generate_branch_without_begin_is_marked(sample: Reader) -> None:
-    found = block(sample, "if (1) always @(posedge clk) q <= d; else always @(posedge clk) q <= 0;\n"
-                          "for (genvar i = 0; i < 2; i++) always @(posedge clk) r[i] <= d[i];\n"
-                          "generate always @(posedge clk) r[3] <= d[3]; endgenerate")
+    found = block(
+        sample,
+        "if (1) always @(posedge clk) q <= d; else always @(posedge clk) q <= 0;\n"
+        "for (genvar i = 0; i < 2; i++) always @(posedge clk) r[i] <= d[i];\n"
+        "generate always @(posedge clk) r[3] <= d[3]; endgenerate",
+    )
     assert [b.unbraced for b in found.top.blocks] == [True, True, True, False]
 
 
 def test_blocks_from_macros_are_traps(sample: Reader) -> None:
     macro = "`define FF(o, i) always @(posedge clk) o <= i;\n`define ACT q <= d\n`define BOTH q <= d; r <= d;\n"
-    for text, name in (("`FF(q, d)", "FF"), ("always @(posedge clk) `ACT;", "ACT"),
-                       ("always @(posedge clk) begin `BOTH end", "BOTH")):
+    for text, name in (
+        ("`FF(q, d)", "FF"),
+        ("always @(posedge clk) `ACT;", "ACT"),
+        ("always @(posedge clk) begin `BOTH end", "BOTH"),
+    ):
         found = block(sample, text, macro)
         assert found.reasons() == ("inside-macro",), text
         assert found.block.traps[0].detail == name
@@ -137,8 +174,12 @@ def test_a_macro_for_the_clock_or_a_constant_is_no_trap(sample: Reader) -> None:
 
 
 def test_an_empty_macro_is_no_trap(sample: Reader) -> None:
-    found = block(sample, "always @(posedge clk) begin `DEBUG(q) if (en) q <= d; `NOTHING end",
-                  "`define DEBUG(x)\n`define NOTHING nothing;\n", "task nothing; begin end endtask")
+    found = block(
+        sample,
+        "always @(posedge clk) begin `DEBUG(q) if (en) q <= d; `NOTHING end",
+        "`define DEBUG(x)\n`define NOTHING nothing;\n",
+        "task nothing; begin end endtask",
+    )
     assert found.reasons() == ()
 
 
@@ -156,8 +197,11 @@ def test_an_event_control_inside_a_block_is_a_trap(sample: Reader) -> None:
 
 
 def test_inactive_text_is_found(sample: Reader) -> None:
-    found = block(sample, "always @(posedge clk) begin\n`ifdef FAST\n  q <= 0;\n`elsif SLOW\n  q <= 1;\n`else\n"
-                          "  q <= d;\n`endif\n`ifndef FAST\n r <= d;\n`else\n r <= 1; // gone\n`endif\nend")
+    found = block(
+        sample,
+        "always @(posedge clk) begin\n`ifdef FAST\n  q <= 0;\n`elsif SLOW\n  q <= 1;\n`else\n"
+        "  q <= d;\n`endif\n`ifndef FAST\n r <= d;\n`else\n r <= 1; // gone\n`endif\nend",
+    )
     assert [found.text(span).strip() for span in found.block.disabled] == ["q <= 0;", "q <= 1;", "r <= 1; // gone"]
 
 
@@ -167,8 +211,11 @@ def test_inactive_text_before_a_block_is_not_its_own(sample: Reader) -> None:
 
 
 def test_crlf_tabs_a_byte_order_mark_and_other_encodings_keep_offsets(sample: Reader) -> None:
-    text = ("\ufeff// \u00fcber\r\nmodule m(input clk, en,\td, output reg q); /* ".encode() + b"caf\xe9*/"
-            + b"\r\n\talways @(posedge clk)\r\n\t\tif (en) q <= d; // \xe4\r\nendmodule\r\n")
+    text = (
+        "\ufeff// \u00fcber\r\nmodule m(input clk, en,\td, output reg q); /* ".encode()
+        + b"caf\xe9*/"
+        + b"\r\n\talways @(posedge clk)\r\n\t\tif (en) q <= d; // \xe4\r\nendmodule\r\n"
+    )
     found = sample(text)
     assert found.text(found.block.span) == "always @(posedge clk)\r\n\t\tif (en) q <= d;"
 
@@ -189,8 +236,10 @@ def test_escaped_identifiers(sample: Reader) -> None:
 
 def test_a_block_in_a_header_that_is_read_twice_is_a_trap(sample: Reader, tmp_path: object) -> None:
     (tmp_path / "body.vh").write_text("always @(posedge clk) q <= d;\n")  # type: ignore[operator]
-    text = ('module a(input clk, d, output reg q);\n`include "body.vh"\nendmodule\n'
-            'module b(input clk, d, output reg q, p); a u(.q(p), .*);\n`include "body.vh"\nendmodule\n')
+    text = (
+        'module a(input clk, d, output reg q);\n`include "body.vh"\nendmodule\n'
+        'module b(input clk, d, output reg q, p); a u(.q(p), .*);\n`include "body.vh"\nendmodule\n'
+    )
     found = sample(text, "--top", "b")
     assert all("shared-include" in [t.reason for t in b.traps] for m in found.design.modules for b in m.blocks)
     once = sample(text.replace('`include "body.vh"', "always @(posedge clk) q <= d;", 1), "--top", "b")

@@ -13,13 +13,16 @@ def ports(sample: Reader, text: str) -> tuple[Sample, Definition]:
     return found, found.design.definitions["m"]
 
 
-@pytest.mark.parametrize("text,style,names", [
-    ("module m(input a, output b); endmodule", PortStyle.ANSI, ("a", "b")),
-    ("module m(a, b); input a; output b; endmodule", PortStyle.NON_ANSI, ("a", "b")),
-    ("module m(a, .b(c)); input a; output c; endmodule", PortStyle.NON_ANSI, ("a", "b")),
-    ("module m(); endmodule", PortStyle.EMPTY, ()),
-    ("module m #(parameter P = 1); endmodule", PortStyle.NONE, ()),
-])
+@pytest.mark.parametrize(
+    "text,style,names",
+    [
+        ("module m(input a, output b); endmodule", PortStyle.ANSI, ("a", "b")),
+        ("module m(a, b); input a; output b; endmodule", PortStyle.NON_ANSI, ("a", "b")),
+        ("module m(a, .b(c)); input a; output c; endmodule", PortStyle.NON_ANSI, ("a", "b")),
+        ("module m(); endmodule", PortStyle.EMPTY, ()),
+        ("module m #(parameter P = 1); endmodule", PortStyle.NONE, ()),
+    ],
+)
 def test_port_lists(sample: Reader, text: str, style: PortStyle, names: tuple[str, ...]) -> None:
     found, definition = ports(sample, text)
     assert (definition.ports.style, definition.ports.names) == (style, names)
@@ -51,15 +54,22 @@ def test_a_first_port_without_direction(sample: Reader) -> None:
 
 
 def test_instances_in_every_branch(sample: Reader) -> None:
-    found = sample("module leaf(input a, output b); endmodule\n"
-                   "module m(input a); wire b, c; leaf n(.a(a), .b()), o(a, c); leaf w(.*); leaf e();\n"
-                   "if (0) begin leaf untaken[1:0](a, ); end else leaf lone(.a);\n"
-                   "leaf d(\n`ifdef X\n.a(a)\n`endif\n); endmodule")
+    found = sample(
+        "module leaf(input a, output b); endmodule\n"
+        "module m(input a); wire b, c; leaf n(.a(a), .b()), o(a, c); leaf w(.*); leaf e();\n"
+        "if (0) begin leaf untaken[1:0](a, ); end else leaf lone(.a);\n"
+        "leaf d(\n`ifdef X\n.a(a)\n`endif\n); endmodule"
+    )
     by_name = {i.name: i for i in found.design.definitions["m"].instances}
     assert {n: i.style for n, i in by_name.items()} == {
-        "n": ConnectionStyle.NAMED, "o": ConnectionStyle.ORDERED, "w": ConnectionStyle.WILDCARD,
-        "e": ConnectionStyle.EMPTY, "untaken": ConnectionStyle.ORDERED, "lone": ConnectionStyle.NAMED,
-        "d": ConnectionStyle.EMPTY}
+        "n": ConnectionStyle.NAMED,
+        "o": ConnectionStyle.ORDERED,
+        "w": ConnectionStyle.WILDCARD,
+        "e": ConnectionStyle.EMPTY,
+        "untaken": ConnectionStyle.ORDERED,
+        "lone": ConnectionStyle.NAMED,
+        "d": ConnectionStyle.EMPTY,
+    }
     assert found.text(by_name["untaken"].span) == "untaken[1:0](a, )"
     assert found.text(by_name["n"].parentheses) == "(.a(a), .b())"
     assert by_name["n"].connected == ("a", "b")
@@ -68,8 +78,10 @@ def test_instances_in_every_branch(sample: Reader) -> None:
 
 
 def test_bind_and_macros_are_marked(sample: Reader) -> None:
-    found = sample("`define MAKE leaf k(.a(a));\nmodule leaf(input a); endmodule\n"
-                   "module m(input a); `MAKE bind m leaf b(.a(a)); endmodule")
+    found = sample(
+        "`define MAKE leaf k(.a(a));\nmodule leaf(input a); endmodule\n"
+        "module m(input a); `MAKE bind m leaf b(.a(a)); endmodule"
+    )
     marks = {i.name: (i.in_macro, i.is_bind) for i in found.design.definitions["m"].instances}
     assert marks == {"k": (True, False), "b": (False, True)}
 
@@ -113,13 +125,25 @@ def test_reasons_not_to_edit(sample: Reader, tmp_path: Path) -> None:
     (tmp_path / "lib.v").write_text("module cell_a(input a); endmodule\n")
     (tmp_path / "dir").mkdir()
     (tmp_path / "dir" / "cell_b.v").write_text("module cell_b(input a); endmodule\n")
-    found = sample("`define HEAD module macro_made(input a);\n`HEAD endmodule\n"
-                   "`celldefine\nmodule tech(input a); endmodule\n`endcelldefine\n"
-                   "module m(input a); cell_a x(a); cell_b y(a); tech z(a); macro_made w(a); endmodule",
-                   "-v", "lib.v", "-y", "dir", "+libext+.v", "--top", "m")
+    found = sample(
+        "`define HEAD module macro_made(input a);\n`HEAD endmodule\n"
+        "`celldefine\nmodule tech(input a); endmodule\n`endcelldefine\n"
+        "module m(input a); cell_a x(a); cell_b y(a); tech z(a); macro_made w(a); endmodule",
+        "-v",
+        "lib.v",
+        "-y",
+        "dir",
+        "+libext+.v",
+        "--top",
+        "m",
+    )
     traps = {name: d.trap.reason for name, d in found.design.definitions.items() if d.trap}
-    assert traps == {"cell_a": "library-file", "cell_b": "library-file", "tech": "celldefine",
-                     "macro_made": "inside-macro"}
+    assert traps == {
+        "cell_a": "library-file",
+        "cell_b": "library-file",
+        "tech": "celldefine",
+        "macro_made": "inside-macro",
+    }
     assert set(found.design.source.library_files) == {str(tmp_path / "lib.v"), str(tmp_path / "dir" / "cell_b.v")}
 
 
@@ -130,14 +154,17 @@ def test_protected_text_is_not_edited(sample: Reader) -> None:
     assert trap.reason == "encrypted"
 
 
-@pytest.mark.parametrize("text,cell", [
-    ("input c, e, t, output g); logic l; always_latch if (!c) l = e | t; assign g = l & c;", True),
-    ("input c, e, output g); reg l; always @(c or e) if (!c) l <= e; assign g = c & l;", True),
-    ("input c, e, output g); reg l; always @(c or e) if (c) l <= e; assign g = c | l;", True),
-    ("input c, e, output g); reg l; always @* l = e; assign g = c & l;", False),
-    ("input c, e, output g); assign g = c & e;", False),
-    ("input c, e, output g); reg l; always @(posedge c) l <= e; assign g = c & l;", False),
-])
+@pytest.mark.parametrize(
+    "text,cell",
+    [
+        ("input c, e, t, output g); logic l; always_latch if (!c) l = e | t; assign g = l & c;", True),
+        ("input c, e, output g); reg l; always @(c or e) if (!c) l <= e; assign g = c & l;", True),
+        ("input c, e, output g); reg l; always @(c or e) if (c) l <= e; assign g = c | l;", True),
+        ("input c, e, output g); reg l; always @* l = e; assign g = c & l;", False),
+        ("input c, e, output g); assign g = c & e;", False),
+        ("input c, e, output g); reg l; always @(posedge c) l <= e; assign g = c & l;", False),
+    ],
+)
 def test_existing_cells_are_recognised(sample: Reader, text: str, cell: bool) -> None:  # noqa: FBT001
     assert sample(f"module m({text} endmodule").design.definitions["m"].cell_like is cell
 

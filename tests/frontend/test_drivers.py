@@ -34,7 +34,9 @@ def test_what_drives_each_kind_of_signal(sample: Reader) -> None:
     assert isinstance(assign.value, Expr)
     assert assign.value.reads() == {"w", "q"}
     assert {(d.kind, d.bits) for d in ask("m", "parts")} == {
-        (WriterKind.CONTINUOUS, (1, 0)), (WriterKind.INSTANCE, (3, 2))}
+        (WriterKind.CONTINUOUS, (1, 0)),
+        (WriterKind.INSTANCE, (3, 2)),
+    }
     combinational = ask("m", "c")
     assert {d.kind for d in combinational} == {WriterKind.COMBINATIONAL}
     assert isinstance(combinational[0].value, Case)
@@ -47,8 +49,10 @@ def test_what_drives_each_kind_of_signal(sample: Reader) -> None:
 
 
 def test_drivers_inside_generate_scopes(sample: Reader) -> None:
-    found = sample("module m(input clk, input [1:0] d, output reg [1:0] q); for (genvar i = 0; i < 2; i++) begin : g\n"
-                   "wire w; assign w = ~d[i]; always @(posedge clk) q[i] <= w; end endmodule")
+    found = sample(
+        "module m(input clk, input [1:0] d, output reg [1:0] q); for (genvar i = 0; i < 2; i++) begin : g\n"
+        "wire w; assign w = ~d[i]; always @(posedge clk) q[i] <= w; end endmodule"
+    )
     (driver,) = found.design.drivers.drivers_of("m", "g[1].w")
     assert isinstance(driver.value, Expr)
     assert driver.value.key == "~d[g[1].i]"

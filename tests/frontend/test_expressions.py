@@ -10,19 +10,46 @@ PORTS = "input logic clk, input logic [7:0] a, b, input logic [3:0] c, input log
 
 
 def condition(sample: Reader, text: str, before: str = "", head: str = "", declared: str = "") -> tuple[Sample, Expr]:
-    found = sample(f"{before}\nmodule m {head} ({PORTS}, output logic q);\n{declared}\n"
-                   f"always_ff @(posedge clk) if ({text}) q <= 1;\nendmodule\n")
+    found = sample(
+        f"{before}\nmodule m {head} ({PORTS}, output logic q);\n{declared}\n"
+        f"always_ff @(posedge clk) if ({text}) q <= 1;\nendmodule\n"
+    )
     return found, found.first(If).condition
 
 
-@pytest.mark.parametrize("text,width,signed", [
-    ("a", 8, False), ("a + c", 8, False), ("c + a", 8, False), ("a & s", 8, False), ("a << c", 8, False),
-    ("c << a", 4, False), ("a == c", 1, False), ("!a", 1, False), ("~a", 8, False), ("&a", 1, False), ("n", 8, True),
-    ("n + n", 8, True), ("n + a", 8, False), ("n >>> 1", 8, True), ("s ? a : c", 8, False), ("{a, c}", 12, False),
-    ("{3{c}}", 12, False), ("a[3]", 1, False), ("a[6:2]", 5, False), ("a[c +: 3]", 3, False), ("5", 32, True),
-    ("8'h3", 8, False), ("'1", 1, False), ("a + 1", 32, False), ("4'(a)", 4, False), ("$signed(a)", 8, True),
-    ("a inside {1, 2}", 1, False), ("a && n", 1, False),
-])
+@pytest.mark.parametrize(
+    "text,width,signed",
+    [
+        ("a", 8, False),
+        ("a + c", 8, False),
+        ("c + a", 8, False),
+        ("a & s", 8, False),
+        ("a << c", 8, False),
+        ("c << a", 4, False),
+        ("a == c", 1, False),
+        ("!a", 1, False),
+        ("~a", 8, False),
+        ("&a", 1, False),
+        ("n", 8, True),
+        ("n + n", 8, True),
+        ("n + a", 8, False),
+        ("n >>> 1", 8, True),
+        ("s ? a : c", 8, False),
+        ("{a, c}", 12, False),
+        ("{3{c}}", 12, False),
+        ("a[3]", 1, False),
+        ("a[6:2]", 5, False),
+        ("a[c +: 3]", 3, False),
+        ("5", 32, True),
+        ("8'h3", 8, False),
+        ("'1", 1, False),
+        ("a + 1", 32, False),
+        ("4'(a)", 4, False),
+        ("$signed(a)", 8, True),
+        ("a inside {1, 2}", 1, False),
+        ("a && n", 1, False),
+    ],
+)
 def test_size_is_that_of_the_text_alone(sample: Reader, text: str, width: int, signed: bool) -> None:  # noqa: FBT001
     found, expr = condition(sample, text)
     assert (expr.width, expr.signed) == (width, signed)
@@ -50,8 +77,19 @@ def test_keys_tell_apart_how_a_constant_is_written(sample: Reader) -> None:
 
 
 def test_values_come_from_parameters(sample: Reader) -> None:
-    for text, value in (("P", 3), ("P + 1", 4), ("P == 3", 1), ("0 && a", 0), ("a[0] && 0", 0), ("a[0] || 1", 1),
-                        ("-P", -3), ("a[0] && 1", None), ("P > 2 ? 5 : 6", 5), ("V[1]", 1), ("$clog2(P)", 2)):
+    for text, value in (
+        ("P", 3),
+        ("P + 1", 4),
+        ("P == 3", 1),
+        ("0 && a", 0),
+        ("a[0] && 0", 0),
+        ("a[0] || 1", 1),
+        ("-P", -3),
+        ("a[0] && 1", None),
+        ("P > 2 ? 5 : 6", 5),
+        ("V[1]", 1),
+        ("$clog2(P)", 2),
+    ):
         _, expr = condition(sample, text, head="#(parameter int P = 3, parameter logic [3:0] V = 4'b0010)")
         assert expr.constant == value, text
 
@@ -72,11 +110,28 @@ def test_bits_of_selects(sample: Reader) -> None:
     typedef struct packed { logic [2:0] hi; logic [4:0] lo; } pair_t;
     pair_t p; logic [0:7] up; logic [1:0][3:0] two; logic [7:0] mem [0:3]; struct { logic x; logic [3:0] y; } loose;
     logic [11:4] off;"""
-    for text, bits in (("a[3]", (3, 3)), ("a[6:2]", (6, 2)), ("a[2 +: 3]", (4, 2)), ("a[4 -: 3]", (4, 2)),
-                       ("up[0]", (7, 7)), ("up[1:2]", (6, 5)), ("up[1 +: 2]", (6, 5)), ("up[2 -: 2]", (6, 5)),
-                       ("two[1]", (7, 4)), ("two[1][2]", (6, 6)), ("mem[0]", (31, 24)), ("mem[3][1]", (1, 1)),
-                       ("p.hi", (7, 5)), ("p.lo[1]", (1, 1)), ("loose.x", (4, 4)), ("loose.y", (3, 0)),
-                       ("off[4]", (0, 0)), ("off[11:10]", (7, 6)), ("a[c]", None), ("mem[c][1]", None)):
+    for text, bits in (
+        ("a[3]", (3, 3)),
+        ("a[6:2]", (6, 2)),
+        ("a[2 +: 3]", (4, 2)),
+        ("a[4 -: 3]", (4, 2)),
+        ("up[0]", (7, 7)),
+        ("up[1:2]", (6, 5)),
+        ("up[1 +: 2]", (6, 5)),
+        ("up[2 -: 2]", (6, 5)),
+        ("two[1]", (7, 4)),
+        ("two[1][2]", (6, 6)),
+        ("mem[0]", (31, 24)),
+        ("mem[3][1]", (1, 1)),
+        ("p.hi", (7, 5)),
+        ("p.lo[1]", (1, 1)),
+        ("loose.x", (4, 4)),
+        ("loose.y", (3, 0)),
+        ("off[4]", (0, 0)),
+        ("off[11:10]", (7, 6)),
+        ("a[c]", None),
+        ("mem[c][1]", None),
+    ):
         _, expr = condition(sample, text, declared=declared)
         assert isinstance(expr, Select)
         assert expr.bits == bits, text
@@ -104,8 +159,14 @@ def test_functions_tell_what_they_read_and_do(sample: Reader) -> None:
     function automatic logic steps(input logic x); cnt++; return x; endfunction
     function automatic logic talks(input logic x); $display("x"); return x; endfunction
     function automatic logic nested(input logic x); return peeks(x); endfunction"""
-    for name, hidden, pure in (("clean", None, True), ("peeks", "hid", True), ("writes", None, False),
-                               ("steps", "cnt", False), ("talks", None, False), ("nested", "hid", True)):
+    for name, hidden, pure in (
+        ("clean", None, True),
+        ("peeks", "hid", True),
+        ("writes", None, False),
+        ("steps", "cnt", False),
+        ("talks", None, False),
+        ("nested", "hid", True),
+    ):
         _, expr = condition(sample, f"{name}(s)", declared=functions, before="")
         assert isinstance(expr, Call)
         assert (hidden is None or hidden in expr.hidden_reads, expr.pure) == (True, pure), name
@@ -151,16 +212,20 @@ def test_macro_constants_inside_an_expression(sample: Reader) -> None:
 
 
 def test_macro_arguments_are_not_copied(sample: Reader) -> None:
-    found = sample("`define PASS(x) x\nmodule m(input clk, a, b, output reg q);\n"
-                   "always @(posedge clk) if (`PASS(a & b)) q <= 1;\nendmodule")
+    found = sample(
+        "`define PASS(x) x\nmodule m(input clk, a, b, output reg q);\n"
+        "always @(posedge clk) if (`PASS(a & b)) q <= 1;\nendmodule"
+    )
     expr = found.first(If).condition
     assert found.text(expr.span) == "`PASS(a & b)"
 
 
 def test_hierarchical_references_are_marked(sample: Reader) -> None:
-    found = sample("module leaf(input c); logic h; always_ff @(posedge c) h <= ~h; endmodule\n"
-                   "module m(input clk, output logic q); leaf u(clk); always_ff @(posedge clk) if (u.h) q <= 1; "
-                   "endmodule")
+    found = sample(
+        "module leaf(input c); logic h; always_ff @(posedge c) h <= ~h; endmodule\n"
+        "module m(input clk, output logic q); leaf u(clk); always_ff @(posedge clk) if (u.h) q <= 1; "
+        "endmodule"
+    )
     expr = found.first(If).condition
     assert isinstance(expr, Reference)
     assert (expr.is_hierarchical, expr.name) == (True, "u.h")
@@ -168,8 +233,10 @@ def test_hierarchical_references_are_marked(sample: Reader) -> None:
 
 
 def test_compound_assignments_read_their_target(sample: Reader) -> None:
-    found = sample("module m(input clk, input [7:0] a, output logic [7:0] q); logic [7:0] t;\n"
-                   "always_ff @(posedge clk) begin t = 0; t += a; t++; q <= t; end endmodule")
+    found = sample(
+        "module m(input clk, input [7:0] a, output logic [7:0] q); logic [7:0] t;\n"
+        "always_ff @(posedge clk) begin t = 0; t += a; t++; q <= t; end endmodule"
+    )
     plus, step = found.all(Assign)[1:3]
     assert plus.rhs.reads() >= {"a", "t"}
     assert step.rhs.reads() == {"t"}

@@ -66,17 +66,23 @@ def test_declarations_inside(sample: Reader) -> None:
 
 
 def test_locals_never_collide_with_each_other_or_the_module(sample: Reader) -> None:
-    found = body(sample, "begin for (int i = 0; i < 2; i++) q[i] <= d[i]; for (int i = 2; i < 4; i++) q[i] <= d[i];\n"
-                         "begin int i; i = d; r <= i; end end", "integer i;")
+    found = body(
+        sample,
+        "begin for (int i = 0; i < 2; i++) q[i] <= d[i]; for (int i = 2; i < 4; i++) q[i] <= d[i];\n"
+        "begin int i; i = d; r <= i; end end",
+        "integer i;",
+    )
     names = [loop.variables[0] for loop in found.all(Loop)]
     local = next(a.targets[0].variable for a in found.all(Assign) if a.blocking)
     assert len({*names, local, "i"}) == 4
 
 
 def test_for_loops(sample: Reader) -> None:
-    found = body(sample, "begin for (int k = 0; k < 8; k = k + 1) q[k] <= d[k]; for (i = 0; i < 4; "
-                         "i = i + 1) r[2*i] <= d[i]; end",
-                 "integer i;")
+    found = body(
+        sample,
+        "begin for (int k = 0; k < 8; k = k + 1) q[k] <= d[k]; for (i = 0; i < 4; i = i + 1) r[2*i] <= d[i]; end",
+        "integer i;",
+    )
     inner, outer = found.all(Loop)
     assert found.text(inner.head) == "for (int k = 0; k < 8; k = k + 1)"
     assert (len(inner.variables), inner.outer_variables) == (1, ())
@@ -92,9 +98,13 @@ def test_other_loops(sample: Reader) -> None:
 
 
 def test_loops_without_fixed_bounds_are_opaque(sample: Reader) -> None:
-    for text in ("for (int k = 0; k < d; k++) q[k] <= 1;", "while (d > i) i = i + 1;", "repeat (s) q <= d;",
-                 "for (int k = 0; k < 8; k++) begin q[k] <= d[k]; k = k + 1; end",
-                 "for (int k = 0; k < 8; k++) begin if (en) break; q[k] <= d[k]; end"):
+    for text in (
+        "for (int k = 0; k < d; k++) q[k] <= 1;",
+        "while (d > i) i = i + 1;",
+        "repeat (s) q <= d;",
+        "for (int k = 0; k < 8; k++) begin q[k] <= d[k]; k = k + 1; end",
+        "for (int k = 0; k < 8; k++) begin if (en) break; q[k] <= d[k]; end",
+    ):
         found = body(sample, text, "integer i;")
         assert found.all(Opaque), text
 
@@ -103,10 +113,14 @@ def test_targets(sample: Reader) -> None:
     declared = """typedef struct packed { logic [2:0] hi; logic [4:0] lo; } pair_t;
     pair_t p; logic [0:7] up; logic [1:0][3:0] two; logic [7:0] mem [0:3]; logic [7:0] deep [0:1][0:1];"""
     for text, variable, bits, index, unpacked in (
-        ("q <= d;", "q", (7, 0), Index.CONSTANT, False), ("q[3] <= en;", "q", (3, 3), Index.CONSTANT, False),
-        ("q[5:2] <= d;", "q", (5, 2), Index.CONSTANT, False), ("q[s] <= en;", "q", (7, 0), Index.VARIABLE, False),
-        ("q[s +: 2] <= d;", "q", (7, 0), Index.VARIABLE, False), ("p.hi <= d;", "p", (7, 5), Index.CONSTANT, False),
-        ("p.lo[s] <= en;", "p", (4, 0), Index.VARIABLE, False), ("up[0] <= en;", "up", (7, 7), Index.CONSTANT, False),
+        ("q <= d;", "q", (7, 0), Index.CONSTANT, False),
+        ("q[3] <= en;", "q", (3, 3), Index.CONSTANT, False),
+        ("q[5:2] <= d;", "q", (5, 2), Index.CONSTANT, False),
+        ("q[s] <= en;", "q", (7, 0), Index.VARIABLE, False),
+        ("q[s +: 2] <= d;", "q", (7, 0), Index.VARIABLE, False),
+        ("p.hi <= d;", "p", (7, 5), Index.CONSTANT, False),
+        ("p.lo[s] <= en;", "p", (4, 0), Index.VARIABLE, False),
+        ("up[0] <= en;", "up", (7, 7), Index.CONSTANT, False),
         ("two[1][0] <= en;", "two", (4, 4), Index.CONSTANT, False),
         ("two[s] <= d;", "two", (7, 0), Index.VARIABLE, False),
         ("mem[1] <= d;", "mem", (23, 16), Index.CONSTANT, False),
@@ -126,11 +140,14 @@ def test_a_concatenation_has_several_targets(sample: Reader) -> None:
 def test_side_effects_are_opaque(sample: Reader) -> None:
     task = "task put(input [7:0] v); r <= v; endtask"
     for text, what, harmless in (
-        ('$display("%d", d);', "call of $display", True), ("put(d);", "call of put", False),
-        ("assert (en);", "assertion", True), ("$finish;", "call of $finish", False),
+        ('$display("%d", d);', "call of $display", True),
+        ("put(d);", "call of put", False),
+        ("assert (en);", "assertion", True),
+        ("$finish;", "call of $finish", False),
         ("-> e;", "EventTrigger statement", False),
         ("begin : b if (en) disable b; q <= d; end", "Disable statement", False),
-        ("fork q <= d; join", "Block statement", False), ("force q = d;", "ProceduralAssign statement", False),
+        ("fork q <= d; join", "Block statement", False),
+        ("force q = d;", "ProceduralAssign statement", False),
     ):
         node = body(sample, text, f"{task} event e;").first(Opaque)
         assert (node.what, node.harmless) == (what, harmless), text
@@ -138,7 +155,8 @@ def test_side_effects_are_opaque(sample: Reader) -> None:
 
 
 def test_parts_lie_inside_their_statement(sample: Reader) -> None:
-    found = body(sample, "begin : x if (en) begin q <= d; end else if (s == 1) case (s) 0: r <= d; default: ; "
-                         "endcase end")
+    found = body(
+        sample, "begin : x if (en) begin q <= d; end else if (s == 1) case (s) 0: r <= d; default: ; endcase end"
+    )
     for statement in found.block.body.walk():
         assert all(statement.span.covers(child.span) for child in statement.children())
