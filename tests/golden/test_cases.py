@@ -159,6 +159,24 @@ def test_verilator_warns_of_nothing_new(case: Case, rewritten: Bench, tmp_path: 
 
 
 @pytest.mark.simulator
+@pytest.mark.parametrize("case", [pytest.param(case, id=case.name) for case in ALL if case.name in SPLIT_VARIABLES])
+def test_one_clock_per_variable_keeps_verilator_quiet(case: Case, rewritten: Bench, tmp_path: Path) -> None:
+    """Without that option the parts run on clocks of their own (SPLIT_VARIABLES); with it no warning is new."""
+    job = replace(case.job(gold_arguments(case, rewritten)), one_clock_per_variable=True)
+    done = flow.rewrite(job, lambda _: None)
+    assert {r.reason.word for r in done.plan.refusals} & {"several-clocks"}
+    text = next((change.new for change in done.rewrite.files), case.input.read_bytes()) if done.rewrite else b""
+    (tmp_path / case.input.name).write_bytes(text)
+    top = top_of(gold_arguments(case, rewritten)).name
+    gate = Sources((tmp_path / case.input.name, *sorted(rewritten.cells.iterdir())), (), ())
+    before = compilers.verilator(sources(case, rewritten), top, tmp_path)
+    after = compilers.verilator(gate, top, tmp_path)
+    assert before is not None
+    assert after is not None
+    assert set(after) <= set(before)
+
+
+@pytest.mark.simulator
 def test_lockstep_in_icarus(rewritten: Bench, tmp_path: Path) -> None:
     """Every change is simulated beside its original, in six styles of reset, test pin and unknown inputs."""
     found: dict[str, str] = {}
