@@ -14,7 +14,7 @@ from rewriter.analysis.wake import Wake, wake_of
 from rewriter.model.design import ClockedBlock, Design, Module
 from rewriter.model.plan import Anchor, BlockId, Liveness, Occurrence, Outcome, Part, Proposal, Refusal, RegisterId
 from rewriter.model.reasons import PAGES, Reason, Verdict
-from rewriter.model.source import SourceText
+from rewriter.model.source import SourceText, Span
 from rewriter.model.statement import Assign, Opaque
 
 
@@ -90,9 +90,13 @@ class _Finder:
             wake = wake_of(self.block, group, self.temporaries, self.source)
         except CannotCopyError as error:
             span = error.expr.span if error.expr else self.block.span
-            detail = error.expr.key[:80] if error.expr else ""
+            detail = self.spelling(span) if error.expr else ""
             return self.refuse(group, self.context.reason(error.word, span, detail), holds=self.holds(group))
         return self.foreign(group, wake) or self.proposal(group, wake)
+
+    def spelling(self, span: Span) -> str:
+        """Give a condition as the source spells it, on one line and not too long."""
+        return " ".join(self.source.slice(span).decode("utf-8", "replace").split())[:80]
 
     def foreign(self, group: Group, wake: Wake) -> Outcome | None:
         """Refuse a register whose wake condition or value comes from where a sleeping bank cannot follow."""

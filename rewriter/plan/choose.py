@@ -53,7 +53,8 @@ def choose(settled: Settled, policy: Policy, excluded: Mapping[RegisterId, Reaso
     banks: list[Bank] = []
     for wake, proposals in sites:
         if sum(p.bits for p in proposals) < policy.min_bits:
-            refusals.extend(_left(p, "too-few-bits", f"{sum(q.bits for q in proposals)} bits") for p in proposals)
+            bits = sum(p.bits for p in proposals)
+            refusals.extend(_left(p, "too-few-bits", f"{bits} bit{'s' * (bits > 1)}") for p in proposals)
             continue
         cell = _cell(wake, proposals)
         cells.append(cell)

@@ -1,4 +1,4 @@
-// expect: armed left too-few-bits: 1 bits
+// expect: armed left too-few-bits: 1 bit
 // expect: code left too-few-bits: 3 bits
 module small_lock (
     input  logic       clk, rst_n,
