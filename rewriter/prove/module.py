@@ -150,7 +150,7 @@ def _by_variable(failures: list[Failure]) -> dict[str, Failure]:
     """Keep one failure for each variable: a disproof before a limit, hold before load."""
     kept: dict[str, Failure] = {}
     for failure in failures:
-        variable = failure.obligation.variable.removesuffix(".address")
+        variable = failure.obligation.word
         known = kept.get(variable)
         if known is None or (failure.decided and not known.decided):
             kept[variable] = failure

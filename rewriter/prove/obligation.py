@@ -35,6 +35,11 @@ class Obligation:
     gate: Bit = (FALSE, FALSE)
     awake: Bit = (FALSE, FALSE)
 
+    @property
+    def word(self) -> str:
+        """Name what is reported: the variable, a memory together with its addresses."""
+        return self.variable.removesuffix(".address")
+
 
 @dataclass(frozen=True)
 class Failure:
@@ -53,7 +58,11 @@ def unequal(shared: Shared, gold: Bit, gate: Bit) -> Lit:
 
 
 def discharge(shared: Shared, obligations: list[Obligation]) -> list[Failure]:
-    """Ask about a group of obligations together, dropping those that fail until the rest holds."""
+    """Ask about a group of obligations together, dropping the words that fail until the rest holds.
+
+    Returns:
+        The first failure of each word, and what a limit left open.
+    """
     failures: list[Failure] = []
     left = [o for o in obligations if o.differs != FALSE]
     while left:
@@ -65,9 +74,12 @@ def discharge(shared: Shared, obligations: list[Obligation]) -> list[Failure]:
             break
         values = answer.values()
         broken = shared.aig.simulate([o.differs for o in left], values)
-        failed = [o for o, bad in zip(left, broken, strict=True) if bad]
-        failures += [_failure(shared, o, obligations, values) for o in failed]
-        left = [o for o, bad in zip(left, broken, strict=True) if not bad]
+        failed: dict[str, Obligation] = {}
+        for obligation, bad in zip(left, broken, strict=True):
+            if bad:
+                failed.setdefault(obligation.word, obligation)
+        failures += [_failure(shared, o, obligations, values) for o in failed.values()]
+        left = [o for o in left if o.word not in failed]
     return failures
 
 
