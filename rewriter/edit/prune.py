@@ -15,6 +15,7 @@ class Pruner:
     Args:
         keep: for statements without branches (assignments, tasks).
         stands: empty statements that must stay (a macro that means something in another build).
+        resets: branches of asynchronous resets; their `else` stays, since engines ask for one.
         holds: blocks that must stay though nothing in them is kept (text of macros and directives).
 
     Where a branch becomes empty, `unique`, `full_case` and the like go: the promise was made for all branches, and
@@ -24,6 +25,7 @@ class Pruner:
     keep: Callable[[Statement], bool]
     holds: Callable[[Block], bool] = lambda _: False
     stands: Callable[[Empty], bool] = lambda _: False
+    resets: frozenset[Span] = frozenset()
 
     def prune(self, statement: Statement, *, else_follows: bool = False) -> Statement | None:
         """Give the statement without what is not kept; None when nothing is.
@@ -53,7 +55,7 @@ class Pruner:
         other = self.prune(statement.other, else_follows=else_follows) if statement.other else None
         had_else = statement.other is not None
         # With both an `else` that goes and one that follows, `else ;` stays as a guard.
-        guard = had_else and other is None and else_follows
+        guard = had_else and other is None and (else_follows or statement.then.span in self.resets)
         then = self.prune(statement.then, else_follows=had_else and (other is not None or guard))
         if then is None and other is None:
             return None

@@ -171,10 +171,10 @@ class SkeletonWriter:
                 return statement
 
     def _lent(self, branches: list[str]) -> list[LocalDeclaration]:
-        """Give the declarations of the outermost block that the copy needs."""
-        outer, used = self._synchronous, words("\n".join(branches))
-        declarations = outer.declarations if isinstance(outer, Block) else ()
-        return [d for d in declarations if used & {_simple(path) for path in d.names}]
+        """Give the declarations of the outermost block, and of those around it, that the copy needs."""
+        place, used = self._synchronous.span, words("\n".join(branches))
+        around = (b for b in self.block.body.walk() if isinstance(b, Block) and b.span.covers(place))
+        return [d for b in around for d in b.declarations if used & {_simple(path) for path in d.names}]
 
     def _declared(self, branches: list[str]) -> list[str]:
         """Declare what the outermost block declared, and the module's temporaries that the copy writes."""

@@ -99,7 +99,7 @@ class Splitter:
                 return not all(target.variable in idle for target in statement.targets)
             return not any(self._writes(bank, statement) for bank in self.banks)
 
-        return Pruner(stays, self._holds, self._stands).prune(self.block.body)
+        return Pruner(stays, self._holds, self._stands, self._resets).prune(self.block.body)
 
     def _matters(self, statement: Statement) -> bool:
         match statement:
@@ -242,6 +242,10 @@ class Splitter:
 
     def _writes(self, bank: Bank, statement: Assign) -> bool:
         return any(statement.span in proposal.writes for proposal in bank.proposals)
+
+    @cached_property
+    def _resets(self) -> frozenset[Span]:
+        return frozenset(reset.branch.span for reset in self.block.resets)
 
     def _stands(self, statement: Empty) -> bool:
         """Say whether an empty statement is the text of a macro, which another build may fill."""

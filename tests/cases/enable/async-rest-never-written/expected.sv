@@ -12,7 +12,7 @@ module lock_keeper (
     always_ff @(posedge clk or posedge rst) begin
         if (rst) begin
             spare <= 5'd17;
-        end
+        end else begin end
     end
     // stillclock: gate_q sleeps unless it is written
     wire wake_gate_q = open;

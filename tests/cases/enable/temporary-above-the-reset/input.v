@@ -11,7 +11,7 @@ module crow_nest (clk, rst, fish, lookout, perch);
             perch <= 6'd21;
         else begin
             seen = fish[3:0];
-            if (seen[0] && lookout) perch <= {seen, fish[5:4]};
+            if (seen != 4'd9 && lookout) perch <= {seen, fish[5:4]};
         end
     end
 endmodule
