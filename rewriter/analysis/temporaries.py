@@ -2,7 +2,7 @@
 
 from dataclasses import dataclass
 
-from rewriter.model.design import ClockedBlock, Module
+from rewriter.model.design import ClockedBlock, Design, Module
 from rewriter.model.expr import Expr
 from rewriter.model.statement import Assign, Block, Case, If, Index, Loop, Opaque, Statement, Target
 
@@ -117,3 +117,13 @@ class _Walker:
 
 def _index_reads(target: Target) -> frozenset[str]:
     return frozenset[str]().union(*(index.reads() for index in target.indices))
+
+
+def all_of(design: Design) -> frozenset[tuple[str, str]]:
+    """Give definition and plain name of everything that clocked blocks write with `=`, loop variables included."""
+    return frozenset(
+        (module.definition, name.rpartition(".")[2])
+        for module in design.modules
+        for block in module.blocks
+        for name in find(block, module).names | loop_names(block.body)
+    )

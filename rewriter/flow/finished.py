@@ -6,6 +6,7 @@ from pathlib import Path
 from typing import Any
 
 from rewriter import frontend
+from rewriter.analysis import temporaries
 from rewriter.flow.job import Progress
 from rewriter.model.cells import WRAPPERS
 from rewriter.model.design import Design, Note
@@ -44,6 +45,7 @@ def prove_folder(place: Path, limits: Limits, progress: Progress) -> Proved:
         test_active_low=any(pin["module"] == gold.top and pin["active_low"] for pin in pins),
         limits=limits,
         stubs=gold.stubs,
+        temporaries=temporaries.all_of(gold),
     )
     return Proved(gold.top, prove(job, progress), (*gate.warnings, *_changed(gold, report)))
 
@@ -60,7 +62,16 @@ def prove_rtl(arguments: tuple[str, ...], limits: Limits, progress: Progress) ->
     if not cells:
         names = " or ".join(WRAPPERS.values())
         raise UserError(f"the RTL holds no gating cell ({names})", help="give rewritten RTL, its cells included")
-    job = ProofJob(None, design.source, design.top, cells, test_port=None, limits=limits, stubs=design.stubs)
+    job = ProofJob(
+        None,
+        design.source,
+        design.top,
+        cells,
+        test_port=None,
+        limits=limits,
+        stubs=design.stubs,
+        temporaries=temporaries.all_of(design),
+    )
     return Proved(design.top, prove(job, progress), design.warnings)
 
 

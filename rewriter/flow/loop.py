@@ -5,6 +5,7 @@ from collections.abc import Mapping
 from dataclasses import replace
 
 from rewriter import frontend
+from rewriter.analysis import temporaries
 from rewriter.edit import EditOptions, edit
 from rewriter.edit.cells import render_cells
 from rewriter.flow.checks import check, judge, rewritten_source
@@ -124,6 +125,7 @@ def _proved(run: Run, done: Rewrite, job: Job, watch: StopWatch) -> Run:
         test_active_low=pin is not None and pin.active_low,
         limits=job.limits,
         stubs=run.design.stubs,
+        temporaries=temporaries.all_of(run.design),
     )
     with watch.stage("prove", "proving"):
         result = prove(work, watch.progress)

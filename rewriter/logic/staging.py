@@ -20,6 +20,10 @@ _PLAIN = re.compile(r"[\w./+\-]+\Z")
 # (and, Yosys 0.70, drops the arm of a parallel case that does nothing), so both sides are read without them.
 _PROMISE = re.compile(rb"\b(full|parallel)_case\b")
 
+_ASCII = bytes(range(128)) + b"?" * 128
+# Options of slang's driver that the engine does not know: it is given stubs for unknown modules.
+_NOT_THE_ENGINES = frozenset(("--ignore-unknown-modules",))
+
 
 @dataclass
 class Stage:
@@ -47,7 +51,7 @@ class Stage:
             if any(name.encode() in data for name in WRAPPERS):
                 found.update(name.decode() for name in _WRAPPER.findall(data))
                 data = _WRAPPER.sub(_without_body, data)
-            data = _PROMISE.sub(_without_promise, data)
+            data = _PROMISE.sub(_without_promise, _plain(data))
             path = self._path(text.path)
             path.parent.mkdir(parents=True, exist_ok=True)
             path.write_bytes(data)
@@ -74,7 +78,10 @@ class Stage:
             words += ["-I", self.seen(directory)]
         for library in source.library_files:
             words += ["-v", self.seen(library)]
-        words += [*source.options, *(self.seen(file) for file in source.files)]
+        words += [
+            *(option for option in source.options if option not in _NOT_THE_ENGINES),
+            *(self.seen(file) for file in source.files),
+        ]
         words.append(f"{MOUNT}/{self.side}/stillclock_stubs.sv")
         path = self.folder / f"{self.side}.f"
         path.write_text("\n".join(_quoted(word) for word in words) + "\n", encoding="utf-8")
@@ -128,6 +135,15 @@ def _net_initialisers(messages: str) -> set[tuple[str, int]]:
         for line in messages.splitlines()
         if "design initialization" in line and (found := _MESSAGE.match(line))
     }
+
+
+def _plain(data: bytes) -> bytes:
+    """Replace the bytes of a text that is no UTF-8 one for one, so that none swallows what follows it."""
+    try:
+        data.decode("utf-8")
+    except UnicodeDecodeError:
+        return data.translate(_ASCII)
+    return data
 
 
 def _without_promise(found: re.Match[bytes]) -> bytes:

@@ -26,6 +26,8 @@ class ProofJob:
         cell_texts: name -> text of the wrapper files whose lemma is to be proved.
         test_port: name of the top-level override input (None: found from the cells' test pins).
         test_active_low: the override is active when 0.
+        temporaries: definition and plain name of variables that blocks write with `=` for their own use. They may
+            differ where nothing reads them; every other register must be equal, read or not.
         stubs: SystemVerilog modules, ports and parameters only, for every module without source.
     """
 
@@ -37,6 +39,7 @@ class ProofJob:
     test_active_low: bool = False
     limits: Limits = Limits()
     stubs: str = ""
+    temporaries: frozenset[tuple[str, str]] = frozenset()
 
 
 @dataclass(frozen=True)

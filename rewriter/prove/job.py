@@ -107,7 +107,14 @@ class _Run:
         limits = self.job.limits
         try:
             proof = prove_module(
-                gold, gate, itself=self.job.gold is None, query_seconds=limits.query_seconds, deadline=self.deadline
+                gold,
+                gate,
+                itself=self.job.gold is None,
+                query_seconds=limits.query_seconds,
+                deadline=self.deadline,
+                temporaries=frozenset(
+                    name for definition, name in self.job.temporaries if definition == gate.definition
+                ),
             )
             find_wider(proof)
             self.wakes += [(gate.definition, *group) for group in equal_wakes(proof)]

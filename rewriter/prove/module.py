@@ -58,7 +58,15 @@ class ModuleProof:
         return self.comparison.shared
 
 
-def prove_module(gold: Module, gate: Module, *, itself: bool, query_seconds: float, deadline: float) -> ModuleProof:
+def prove_module(  # noqa: PLR0913 (both texts, limits, and what may differ)
+    gold: Module,
+    gate: Module,
+    *,
+    itself: bool,
+    query_seconds: float,
+    deadline: float,
+    temporaries: frozenset[str] = frozenset(),
+) -> ModuleProof:
     """Compare both texts of a module.
 
     Args:
@@ -67,6 +75,7 @@ def prove_module(gold: Module, gate: Module, *, itself: bool, query_seconds: flo
         itself: `gold` is `gate`, taken with its cells transparent.
         query_seconds: limit of one question.
         deadline: `time.monotonic()` value of the whole run.
+        temporaries: plain names of variables that may differ where nothing reads them.
 
     Raises:
         UnsupportedCellError: the netlist holds what cannot be modelled.
@@ -76,7 +85,7 @@ def prove_module(gold: Module, gate: Module, *, itself: bool, query_seconds: flo
     before = Side(shared, gold, None, transparent=itself)
     comparison = Comparison(shared, before, Side(shared, gate, before))
     comparison.collect()
-    return judge(comparison, Liveness(comparison))
+    return judge(comparison, Liveness(comparison, temporaries))
 
 
 def judge(comparison: Comparison, live: "Liveness") -> ModuleProof:
@@ -104,7 +113,7 @@ def _judge(proof: ModuleProof, bank: Bank, live: "Liveness") -> None:
             cell.refuse(EvidenceKind.DISPROVED, fault.reason, f"{variable}: {fault.detail}")
     for variable, failure in _by_variable(failures).items():
         register = failure.obligation.kind in ("next", "reset", "memory", "latch", "clock")
-        if register and failure.decided and not live.is_live(variable):
+        if register and failure.decided and live.may_differ(variable):
             for cell in chain:
                 cell.dead.append(variable)
             proof.notes.append(f"{variable} differs, but nothing reads it")
@@ -160,11 +169,16 @@ def _by_variable(failures: list[Failure]) -> dict[str, Failure]:
 class Liveness:
     """Which registers something reads, on either side: outputs, instances, memories, or a register that is read."""
 
-    def __init__(self, comparison: Comparison) -> None:
+    def __init__(self, comparison: Comparison, temporaries: frozenset[str]) -> None:
         self.comparison = comparison
+        self.temporaries = temporaries
         self.live: set[tuple[str, str]] = set()
         for side in (comparison.gold, comparison.gate):
             self._walk(side)
+
+    def may_differ(self, variable: str) -> bool:
+        """Tell whether a register is a temporary of a block that nothing reads: it may sleep with the block."""
+        return variable.rpartition(".")[2] in self.temporaries and not self.is_live(variable)
 
     def is_live(self, variable: str) -> bool:
         """Tell whether a register (or memory) of both sides is read on either."""

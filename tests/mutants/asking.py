@@ -4,6 +4,7 @@ import time
 from collections.abc import Callable, Sequence
 from dataclasses import dataclass, replace
 from functools import cached_property
+from typing import Any
 from unittest.mock import patch
 
 from rewriter.logic.aig import FALSE, Lit
@@ -20,7 +21,25 @@ from tests.mutants.netlists import choose, word
 from tests.mutants.relation import Beside, Relation
 
 _QUERY, _RUN = 20.0, 3600.0
-Proofs = dict[tuple[int, int], ModuleProof]
+
+
+class _Known:
+    """One module of the rewrite and of the original; mutants of it share their graph and solver."""
+
+    def __init__(self, gold: Module, good: Module) -> None:
+        self.shared = Shared(_QUERY, time.monotonic() + _RUN)
+        self.gold = Side(self.shared, gold, None)
+        self.good = self.side(good)
+
+    def side(self, module: Module) -> Side:
+        """Put a mutant into the graph."""
+        return Side(self.shared, module, self.gold)
+
+    def prove(self, module: Module, temporaries: frozenset[str]) -> ModuleProof:
+        """Do what `prove_module` does, in the shared graph."""
+        comparison = Comparison(self.shared, self.gold, self.side(module))
+        comparison.collect()
+        return judge(comparison, Liveness(comparison, temporaries))
 
 
 @dataclass(frozen=True)
@@ -44,8 +63,14 @@ class Netlists:
     lemma: dict[str, str]
 
     @cached_property
-    def _known(self) -> Proofs:
+    def _proofs(self) -> dict[str, ModuleProof]:
         return {}
+
+    @cached_property
+    def _known(self) -> dict[str, _Known]:
+        return {
+            name: _Known(self.gold.modules[name], module) for name, module in self.good.modules.items() if module.cells
+        }
 
     def prove(self, change: Callable[[Netlist], Netlist]) -> ProofResult:
         """Prove a mutant: everything after the elaboration."""
@@ -58,15 +83,11 @@ class Netlists:
             return prover.prove(self.job)
 
     def relation(self, bad: Netlist) -> Relation:
-        """Compare the edges of the module that a mutant changes with those of the rewrite."""
+        """Compare the edges of the modules that a mutant changes with those of the rewrite."""
         changed = [name for name, module in bad.modules.items() if module is not self.good.modules[name]]
-        found = [self._relation(name, bad.modules[name]) for name in changed]
+        known = [(self._known[name], bad.modules[name]) for name in changed]
+        found = [Beside(one.shared, one.good, one.side(module)).relation() for one, module in known]
         return max(found, key=list(Relation).index, default=Relation.SAME)
-
-    def _relation(self, name: str, bad: Module) -> Relation:
-        shared = Shared(_QUERY, time.monotonic() + _RUN)
-        gold = Side(shared, self.gold.modules[name], None)
-        return Beside(shared, Side(shared, self.good.modules[name], gold), Side(shared, bad, gold)).relation()
 
     def _elaborated(self, change: Callable[[Netlist], Netlist]) -> Callable[..., Elaborated]:
         def elaborated(*_: object, memories: bool, **__: object) -> Elaborated:
@@ -75,16 +96,15 @@ class Netlists:
 
         return elaborated
 
-    def _proved(
-        self, gold: Module, gate: Module, *, itself: bool, query_seconds: float, deadline: float
-    ) -> ModuleProof:
-        limit = max(deadline, time.monotonic() + _RUN)
-        if gate not in self.good.modules.values():
-            return prove_module(gold, gate, itself=itself, query_seconds=query_seconds, deadline=limit)
-        key = (id(gold), id(gate))
-        if key not in self._known:
-            self._known[key] = prove_module(gold, gate, itself=itself, query_seconds=query_seconds, deadline=limit)
-        return self._known[key]
+    def _proved(self, gold: Module, gate: Module, **options: Any) -> ModuleProof:
+        name = gate.name
+        if self.gold.modules.get(name) is not gold:
+            return prove_module(gold, gate, **options)
+        if gate is not self.good.modules[name]:
+            return self._known[name].prove(gate, options["temporaries"])
+        if name not in self._proofs:
+            self._proofs[name] = self._known[name].prove(gate, options["temporaries"])
+        return self._proofs[name]
 
 
 class _Assuming(Solver):
@@ -105,9 +125,10 @@ class Chooser:
     Args:
         gold: the original.
         gate: the rewrite with all mutants.
+        temporaries: of the module.
     """
 
-    def __init__(self, gold: Module, gate: Module) -> None:
+    def __init__(self, gold: Module, gate: Module, temporaries: frozenset[str]) -> None:
         self.shared = Shared(_QUERY, time.monotonic() + _RUN)
         self.solver = _Assuming(self.shared.aig, _QUERY, time.monotonic() + _RUN)
         self.shared.solver = self.solver
@@ -115,7 +136,7 @@ class Chooser:
         self.bad = Side(self.shared, gate, original)
         self.comparison = Comparison(self.shared, original, self.bad)
         self.comparison.collect()
-        self.live = Liveness(self.comparison)
+        self.live = Liveness(self.comparison, frozenset())
         good = choose(Netlist("", {"": gate}), 0).modules[""]
         self._beside = Beside(self.shared, Side(self.shared, good, original), self.bad)
         self._word = {place: self.bad.cone.bit(net)[0] for net, place in word(gate).items()}

@@ -168,9 +168,10 @@ def test_a_temporary_that_sleeps_with_its_block_is_named_but_disproves_nothing()
     gate = f"""module lamp (input logic clk, en, input logic [3:0] d, output logic [3:0] q, input wire test_en);
         logic [3:0] t; {icg("q", "en")}
         always @(posedge gclk_q) begin t = d + 1; if (en) q <= t; end endmodule"""
-    result = answer(gold, gate)
+    result = answer(gold, gate, temporaries=frozenset({("lamp", "t")}))
     assert result.proved
     assert cell(result, "u_icg_q").dead == ("t",)
+    assert cell(answer(gold, gate), "u_icg_q").failing == ("t",), "any other register must be equal, read or not"
 
 
 def test_equal_wakes_are_found_and_others_are_not() -> None:
