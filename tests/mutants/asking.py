@@ -96,7 +96,7 @@ class Netlists:
 
         return elaborated
 
-    def _proved(self, gold: Module, gate: Module, **options: Any) -> ModuleProof:
+    def _proved(self, gold: Module, gate: Module, **options: Any) -> ModuleProof:  # noqa: ANN401 (passed on)
         name = gate.name
         if self.gold.modules.get(name) is not gold:
             return prove_module(gold, gate, **options)
@@ -136,7 +136,7 @@ class Chooser:
         self.bad = Side(self.shared, gate, original)
         self.comparison = Comparison(self.shared, original, self.bad)
         self.comparison.collect()
-        self.live = Liveness(self.comparison, frozenset())
+        self.live = Liveness(self.comparison, temporaries)
         good = choose(Netlist("", {"": gate}), 0).modules[""]
         self._beside = Beside(self.shared, Side(self.shared, good, original), self.bad)
         self._word = {place: self.bad.cone.bit(net)[0] for net, place in word(gate).items()}

@@ -119,8 +119,8 @@ def _fate(differs: Sequence[object], undecided: object, dead: frozenset[str]) ->
 
 
 _COLUMNS = (
-    "planted", "disproved", "differs, unread", "right place named", "harmless by SAT: same", "wider", "reported wider",
-    "unexplained",
+    "planted", "disproved", "differs, unread", "right place named", "harmless by SAT: same", "wider", "loses x only",
+    "reported wider", "unexplained",
 )  # fmt: skip
 
 
@@ -138,7 +138,7 @@ def _row(name: str, outcomes: Sequence[Outcome]) -> str:
     named = _count(outcome.found for outcome in outcomes)
     harmless = [
         _count(outcome.harmless and outcome.relation is relation for outcome in outcomes)
-        for relation in (Relation.SAME, Relation.WIDER)
+        for relation in (Relation.SAME, Relation.WIDER, Relation.IDLE)
     ]
     reported = _count(outcome.harmless and outcome.relation is Relation.WIDER and outcome.wider for outcome in outcomes)
     numbers = [len(outcomes), *fates, named, *harmless, reported, _count(bool(outcome.wrong) for outcome in outcomes)]

@@ -8,8 +8,9 @@ from collections.abc import Sequence
 from dataclasses import dataclass
 from enum import Enum
 
-from rewriter.logic.aig import TRUE, Lit
+from rewriter.logic.aig import FALSE, TRUE, Lit
 from rewriter.logic.netlist import Bit
+from rewriter.logic.state import step
 from rewriter.model.cells import PORTS, RISING
 from rewriter.prove.pair import GATING, Key, Shared, Side
 
@@ -19,13 +20,14 @@ class Relation(Enum):
 
     SAME = "the same edges pass"
     WIDER = "more edges pass"
+    IDLE = "no edge is missing but those that load an x, or what is there already"
     LESS = "an edge is missing"
     OTHER = "another clock, or another edge of it"
 
     @property
     def harmless(self) -> bool:
-        """Say whether no edge is missing."""
-        return self in (Relation.SAME, Relation.WIDER)
+        """Say whether no edge is missing that the original needs."""
+        return self in (Relation.SAME, Relation.WIDER, Relation.IDLE)
 
 
 @dataclass(frozen=True)
@@ -37,6 +39,7 @@ class _Edges:
     fits: bool  # every cell of the chain passes the edge at which the register changes
     surely: Lit  # 1 when they pass
     perhaps: Lit  # 1 when they pass, or when an x decides
+    tested: Lit  # 1 when a test pin of the chain is
 
 
 class Beside:
@@ -50,27 +53,40 @@ class Beside:
 
     def __init__(self, shared: Shared, good: Side, bad: Side) -> None:
         self.shared = shared
+        self.good = good
+        self._pairs: dict[tuple[_Edges, _Edges], list[Key]] = {}
         before, after = _clocks(good), _clocks(bad)
-        self._pairs = {(_edges(good, *clock), _edges(bad, *after[key])) for key, clock in before.items()}
+        for key, clock in before.items():
+            self._pairs.setdefault((_edges(good, *clock), _edges(bad, *after[key])), []).append(key)
 
     def relation(self, assumed: Sequence[Lit] = ()) -> Relation:
         """Say what the mutant does to the worst register; `assumed` literals are 1 throughout."""
-        found = [_compare(self.shared, good, bad, assumed) for good, bad in self._pairs]
+        found = [self._compare(good, bad, keys, assumed) for (good, bad), keys in self._pairs.items()]
         return max(found, key=list(Relation).index, default=Relation.SAME)
 
+    def _compare(self, good: _Edges, bad: _Edges, keys: Sequence[Key], assumed: Sequence[Lit]) -> Relation:
+        if (good.root, good.rising, good.fits) != (bad.root, bad.rising, bad.fits):
+            return Relation.OTHER
+        missing = (good.perhaps, bad.surely ^ 1)
+        if self._possible(*missing, *assumed):
+            # Under the override every edge is needed, whatever it loads.
+            needed = self.shared.aig.any_of([good.tested, *(self._loads(key) for key in keys)])
+            return Relation.LESS if self._possible(*missing, needed, *assumed) else Relation.IDLE
+        return Relation.WIDER if self._possible(bad.perhaps, good.surely ^ 1, *assumed) else Relation.SAME
 
-def _compare(shared: Shared, good: _Edges, bad: _Edges, assumed: Sequence[Lit]) -> Relation:
-    if (good.root, good.rising, good.fits) != (bad.root, bad.rising, bad.fits):
-        return Relation.OTHER
-    if _possible(shared, good.perhaps, bad.surely ^ 1, assumed):
-        return Relation.LESS
-    return Relation.WIDER if _possible(shared, bad.perhaps, good.surely ^ 1, assumed) else Relation.SAME
+    def _loads(self, key: Key) -> Lit:
+        """Give when an edge would give a register bit another value, one that is no x; memories may always."""
+        register = self.good.by_key.get(key)
+        if register is None:
+            return TRUE
+        value, unknown = step(register, self.good.cone).data
+        own = self.good.cone.bit(register.net)[0]
+        return self.shared.aig.both(unknown ^ 1, self.shared.aig.differ(value, own))
 
-
-def _possible(shared: Shared, a: Lit, b: Lit, assumed: Sequence[Lit]) -> bool:
-    answer = shared.solver.ask([a, b, *assumed])
-    assert answer is not None, "the solver reached its limit"
-    return answer is not False
+    def _possible(self, *lits: Lit) -> bool:
+        answer = self.shared.solver.ask(lits)
+        assert answer is not None, "the solver reached its limit"
+        return answer is not False
 
 
 def _clocks(side: Side) -> dict[Key, tuple[Bit, bool]]:
@@ -86,12 +102,13 @@ def _clocks(side: Side) -> dict[Key, tuple[Bit, bool]]:
 def _edges(side: Side, net: Bit, rising: bool) -> _Edges:  # noqa: FBT001 (a pair)
     cells = {cell.outputs[PORTS.output][0]: cell for cell in side.module.instances.values() if cell.type in GATING}
     aig = side.shared.aig
-    surely, perhaps, fits = TRUE, TRUE, True
+    surely, perhaps, tested, fits = TRUE, TRUE, FALSE, True
     while net in cells:
         cell = cells[net]
         pins = [side.cone.bit(cell.inputs[pin][0]) for pin in (PORTS.wake, PORTS.test)]
         surely = aig.both(surely, aig.any_of(aig.both(value, unknown ^ 1) for value, unknown in pins))
         perhaps = aig.both(perhaps, aig.any_of(lit for pin in pins for lit in pin))
+        tested = aig.either(tested, pins[1][0])
         fits = fits and (cell.type == RISING) == rising
         net = cell.inputs[PORTS.clock][0]
-    return _Edges(side.cone.bit(net)[0], rising, fits, surely, perhaps)
+    return _Edges(side.cone.bit(net)[0], rising, fits, surely, perhaps, tested)

@@ -3,6 +3,7 @@
 from dataclasses import dataclass, replace
 from functools import cached_property
 
+from rewriter.analysis import temporaries
 from rewriter.edit.cells import load_cell_map
 from rewriter.flow.checks import rewritten_source
 from rewriter.flow.job import Job
@@ -89,7 +90,11 @@ def subject(*arguments: str) -> Subject:
     assert done is not None
     gate = rewritten_source(run.design, done)
     top = run.design.top
-    return Subject(run, ProofJob(run.design.source, gate, top, done.cell_files, done.test_ports.get(top)))
+    job = ProofJob(
+        run.design.source, gate, top, done.cell_files, done.test_ports.get(top),
+        stubs=run.design.stubs, temporaries=temporaries.all_of(run.design),
+    )  # fmt: skip
+    return Subject(run, job)
 
 
 def variable(name: str) -> str:

@@ -27,21 +27,26 @@ def picorv32() -> Trial:
     return trial("picorv32")
 
 
-def judged(outcomes: Sequence[Outcome]) -> None:
+def judged(tried: Trial, outcomes: Sequence[Outcome]) -> None:
     print(f"\n{table(outcomes)}")  # noqa: T201 - shown with -s
     wrong = [outcome for outcome in outcomes if outcome.wrong]
     assert not wrong, wrong[:5]
     silent = [
         outcome
         for outcome in outcomes
-        if outcome.mutant.number and outcome.harmless and outcome.relation is Relation.WIDER and not outcome.wider
+        if outcome.mutant.number
+        and outcome.harmless
+        and outcome.relation is Relation.WIDER
+        and not outcome.wider
+        # Where a cell wakes for nothing as it is, the report says so anyway.
+        and (outcome.mutant.definition, outcome.mutant.cell) not in tried.plain.wider
     ]
     assert not silent, silent[:5]
 
 
 def test_every_mutant_of_the_demo(demo: Trial) -> None:
     outcomes = [demo.chosen(one) for one in demo.subject.planted] + [demo.as_netlist(one) for one in demo.rewired]
-    judged(outcomes)
+    judged(demo, outcomes)
     assert not any(outcome.answer.fate is Fate.UNREAD for outcome in outcomes), "nothing of the demo is unread"
     assert {outcome.mutant.kind for outcome in outcomes} >= {"leaf removed", "test link of instance cut"}
     assert {(outcome.mutant.definition, outcome.mutant.cell) for outcome in outcomes} >= demo.subject.registers.keys()
@@ -52,8 +57,8 @@ def test_mutants_of_picorv32(picorv32: Trial) -> None:
     if os.environ.get("STILLCLOCK_MUTANTS") == "all":
         planted, links = list(picorv32.subject.planted), list(picorv32.rewired)
     else:
-        planted, links = sample(picorv32, 240, seed=5)
-    judged([picorv32.chosen(one) for one in planted] + [picorv32.as_netlist(one) for one in links])
+        planted, links = sample(picorv32, 150, seed=5)
+    judged(picorv32, [picorv32.chosen(one) for one in planted] + [picorv32.as_netlist(one) for one in links])
 
 
 def test_a_mutant_is_what_its_text_is(demo: Trial) -> None:

@@ -98,7 +98,8 @@ class Trial:
         if definition not in self._choosers:
             gold, gate = self.subject.sides
             name = next(name for name, module in gate.modules.items() if module.definition == definition)
-            self._choosers[definition] = Chooser(gold.modules[name], gate.modules[name])
+            own = frozenset(variable for module, variable in self.subject.job.temporaries if module == definition)
+            self._choosers[definition] = Chooser(gold.modules[name], gate.modules[name], own)
         return self._choosers[definition]
 
     @cached_property
@@ -152,15 +153,18 @@ def main(arguments: Sequence[str] | None = None) -> int:
     parser.add_argument("name")
     parser.add_argument("--out", type=Path, required=True)
     asked = parser.parse_args(arguments)
-    start = time.monotonic()
     found = trial(asked.name)
-    outcomes = [found.chosen(one) for one in found.subject.planted]
-    sys.stderr.write(f"wake conditions: {time.monotonic() - start:.0f} s\n")
-    outcomes += [found.as_netlist(one) for one in found.rewired]
-    sys.stderr.write(f"all: {time.monotonic() - start:.0f} s\n")
     asked.out.mkdir(parents=True, exist_ok=True)
-    (asked.out / f"{asked.name}.json").write_text(as_json(outcomes), encoding="utf-8")
-    (asked.out / f"{asked.name}.md").write_text(table(outcomes), encoding="utf-8")
+    outcomes: list[Outcome] = []
+    for name, some in (
+        ("conditions", (found.chosen(one) for one in found.subject.planted)),
+        ("links", (found.as_netlist(one) for one in found.rewired)),
+    ):
+        start = time.monotonic()
+        outcomes += some
+        sys.stderr.write(f"{asked.name}, {name}: {time.monotonic() - start:.0f} s\n")
+        (asked.out / f"{asked.name}.json").write_text(as_json(outcomes), encoding="utf-8")
+        (asked.out / f"{asked.name}.md").write_text(table(outcomes), encoding="utf-8")
     sys.stdout.write(table(outcomes))
     return 1 if any(outcome.wrong for outcome in outcomes) else 0
 
