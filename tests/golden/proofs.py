@@ -5,6 +5,7 @@ from dataclasses import dataclass
 from pathlib import Path
 
 from rewriter import frontend
+from rewriter.analysis.temporaries import all_of
 from rewriter.model.evidence import Limits, ProofJob, ProofResult
 from rewriter.prove import prove
 from tests.golden.lockstep import Device
@@ -34,7 +35,16 @@ def prove_all(pairs: Sequence[Pair], cells: dict[str, str], folder: Path) -> Pro
                 files.append(str(folder / name))
         sides.append((str(top), *files, "--top", TOP, "--timescale", "1ns/1ps"))
     gold, gate_design = (frontend.read(side) for side in sides)
-    job = ProofJob(gold.source, gate_design.source, TOP, cells, "test_en", limits=Limits(20, 300), stubs=gold.stubs)
+    job = ProofJob(
+        gold.source,
+        gate_design.source,
+        TOP,
+        cells,
+        "test_en",
+        limits=Limits(20, 300),
+        stubs=gold.stubs,
+        temporaries=all_of(gold),
+    )
     return prove(job, lambda _: None)
 
 
