@@ -29,12 +29,14 @@ class Elaborated:
         message: of the engine, when it failed.
         notes: what a reader of the result must know.
         seconds: time in the engine, and in reading its output.
+        apart: every instance is a module of its own.
     """
 
     sides: tuple[Netlist, ...]
     message: str
     notes: tuple[str, ...]
     seconds: tuple[float, float]
+    apart: bool = True
 
 
 @dataclass(frozen=True)
@@ -118,7 +120,8 @@ class _Elaboration:
         sides = tuple(read_netlist(self.folder / f"{stage.side}.json", self.top) for stage in self.stages)
         if mode.hierarchy != _HIERARCHY[0]:
             notes.append("the engine cannot keep all instances apart: some are proved as part of the one above")
-        return Elaborated(sides, "", tuple(notes), (seconds, time.monotonic() - start))
+        apart = mode.hierarchy == _HIERARCHY[0]
+        return Elaborated(sides, "", tuple(notes), (seconds, time.monotonic() - start), apart)
 
     def _read(self, mode: _Mode) -> bool:
         for _ in range(_MENDS):

@@ -52,6 +52,7 @@ class _Run:
         self.notes: list[str] = []
         self.wakes: list[tuple[str, ...]] = []
         self.registers = self.bits = 0
+        self.apart = True
         self._proofs: dict[tuple[str, str], ModuleProof | str] = {}
 
     def result(self) -> ProofResult:
@@ -79,7 +80,12 @@ class _Run:
         done = elaborate(sources, self.job.top, self._left(), memories=memories, stubs=self.job.stubs)
         for stage, seconds in zip(("elaborate", "read"), done.seconds, strict=True):
             self.seconds[stage] = self.seconds.get(stage, 0.0) + seconds
+        self.apart = done.apart
         return done
+
+    def _temporaries(self, definition: str) -> frozenset[str]:
+        """Give the temporaries of a module; one that holds others flattened has theirs as well."""
+        return frozenset(name for owner, name in self.job.temporaries if owner == definition or not self.apart)
 
     def _prove(self, gold: Netlist, gate: Netlist, lemma: dict[str, str]) -> None:
         originals, rewritten = gold.instances(), gate.instances()
@@ -112,9 +118,7 @@ class _Run:
                 itself=self.job.gold is None,
                 query_seconds=limits.query_seconds,
                 deadline=self.deadline,
-                temporaries=frozenset(
-                    name for definition, name in self.job.temporaries if definition == gate.definition
-                ),
+                temporaries=self._temporaries(gate.definition),
             )
             find_wider(proof)
             self.wakes += [(gate.definition, *group) for group in equal_wakes(proof)]
