@@ -3,6 +3,5 @@
 from rewriter.edit.apply import EditConflictError, apply
 from rewriter.edit.options import EditOptions
 from rewriter.edit.rewriting import edit
-from rewriter.edit.sinks import unified_diff
 
-__all__ = ["EditConflictError", "EditOptions", "apply", "edit", "unified_diff"]
+__all__ = ["EditConflictError", "EditOptions", "apply", "edit"]

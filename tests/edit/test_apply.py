@@ -1,15 +1,12 @@
 """Edits and bytes: nothing outside the spans moves, and edits never overlap."""
 
-import difflib
-from pathlib import Path
-
 import pytest
 from hypothesis import given
 from hypothesis import strategies as st
 
-from rewriter.edit import EditConflictError, apply, unified_diff
+from rewriter.edit import EditConflictError, apply
 from rewriter.edit.apply import arranged
-from rewriter.model.rewrite import Edit, FileChange, Rewrite
+from rewriter.model.rewrite import Edit
 from rewriter.model.source import Span
 
 
@@ -66,28 +63,3 @@ def test_two_insertions_at_one_place_have_no_order() -> None:
 def test_an_edit_outside_its_file_is_a_fault() -> None:
     with pytest.raises(ValueError, match="reaches outside its file"):
         apply([an_edit(8, 12)], {"a.v": b"0123456789"})
-
-
-def a_rewrite(*files: FileChange) -> Rewrite:
-    return Rewrite(files, (), (), {}, {}, {})
-
-
-def test_the_diff_is_relative_and_complete(tmp_path: Path) -> None:
-    changes = (
-        FileChange(str(tmp_path / "rtl/a.v"), b"one\ntwo\n", b"one\nTWO\n"),
-        FileChange(str(tmp_path / "rtl/sub/b.v"), b"\xe9\r\nend", b"\xe9\r\nfin"),
-    )
-    assert unified_diff(a_rewrite(*changes)) == (
-        "--- a/a.v\n+++ b/a.v\n@@ -1,2 +1,2 @@\n one\n-two\n+TWO\n"
-        "--- a/sub/b.v\n+++ b/sub/b.v\n@@ -1,2 +1,2 @@\n \xe9\r\n-end\n\\ No newline at end of file\n"
-        "+fin\n\\ No newline at end of file\n"
-    )
-    assert unified_diff(a_rewrite()) == ""
-
-
-def test_the_diff_says_the_same_as_difflib() -> None:
-    old, new = "a\nb\nc\n", "a\nB\nc\nd\n"
-    ours = unified_diff(a_rewrite(FileChange("/x/y.v", old.encode(), new.encode())))
-    assert ours == "".join(
-        difflib.unified_diff(old.splitlines(keepends=True), new.splitlines(keepends=True), "a/y.v", "b/y.v")
-    )
