@@ -3,7 +3,7 @@
 import re
 from collections.abc import Iterator, Mapping
 
-from rewriter.model.design import Note
+from rewriter.model.design import Design, Note
 from rewriter.model.evidence import CellEvidence, Mismatch, ProofResult
 from rewriter.model.plan import Bank, BlockId, RegisterId
 from rewriter.model.reasons import PAGES, EvidenceKind, Reason, Verdict
@@ -20,15 +20,27 @@ _WORDS = {
 _OPEN = {"undecided", "not-checked"}
 
 
-def pair(done: Rewrite, result: ProofResult) -> dict[str, tuple[CellEvidence, ...]]:
-    """Pair the evidence of elaborated cells with the cells of the plan, all generate indices together."""
+def pair(design: Design, done: Rewrite, result: ProofResult) -> dict[str, tuple[CellEvidence, ...]]:
+    """Pair the evidence of elaborated cells with the cells of the plan, all generate indices together.
+
+    Where the engine keeps instances apart, a cell is known by its definition; where it had to flatten them, by its
+    whole path.
+    """
     by_place: dict[tuple[str, str], list[CellEvidence]] = {}
+    by_path: dict[str, list[CellEvidence]] = {}
     for evidence in result.cells:
         by_place.setdefault((evidence.definition, _INDEX.sub("", evidence.cell)), []).append(evidence)
+        by_path.setdefault(_INDEX.sub("", f"{evidence.module}.{evidence.cell}"), []).append(evidence)
+    instances = {
+        name: {_INDEX.sub("", path) for m in design.modules if m.definition == name for path in m.instances}
+        for name in {cell.definition for cell in done.cells}
+    }
     found: dict[str, tuple[CellEvidence, ...]] = {}
     for cell in done.cells:
-        path = ".".join(part for part in (cell.scope.strip("."), cell.instance) if part)
-        found[cell.cell] = tuple(by_place.get((cell.definition, _INDEX.sub("", path)), ()))
+        path = _INDEX.sub("", ".".join(part for part in (cell.scope.strip("."), cell.instance) if part))
+        apart = by_place.get((cell.definition, path), [])
+        flat = [e for above in sorted(instances[cell.definition]) for e in by_path.get(f"{above}.{path}", ())]
+        found[cell.cell] = (*apart, *(e for e in flat if e not in apart))
     return found
 
 

@@ -129,7 +129,7 @@ def _proved(run: Run, done: Rewrite, job: Job, watch: StopWatch) -> Run:
     )
     with watch.stage("prove", "proving"):
         result = prove(work, watch.progress)
-    return replace(run, proof=result, evidence=pair(done, result))
+    return replace(run, proof=result, evidence=pair(run.design, done, result))
 
 
 def _grow(excluded: dict[RegisterId, Reason], back: Mapping[RegisterId, Reason]) -> bool:
