@@ -57,7 +57,7 @@ def test_mutants_of_picorv32(picorv32: Trial) -> None:
     if os.environ.get("STILLCLOCK_MUTANTS") == "all":
         planted, links = list(picorv32.subject.planted), list(picorv32.rewired)
     else:
-        planted, links = sample(picorv32, 150, seed=5)
+        planted, links = sample(picorv32, 200, seed=5)
     judged(picorv32, [picorv32.chosen(one) for one in planted] + [picorv32.as_netlist(one) for one in links])
 
 
