@@ -8,6 +8,7 @@ from typing import Any
 from rewriter import frontend
 from rewriter.analysis import temporaries
 from rewriter.flow.job import Progress
+from rewriter.flow.parts import prove_parts
 from rewriter.model.cells import WRAPPERS
 from rewriter.model.design import Design, Note
 from rewriter.model.errors import UserError
@@ -47,7 +48,11 @@ def prove_folder(place: Path, limits: Limits, progress: Progress) -> Proved:
         stubs=gold.stubs,
         temporaries=temporaries.all_of(gold),
     )
-    return Proved(gold.top, prove(job, progress), (*gate.warnings, *_changed(gold, report)))
+    result = prove(job, progress)
+    if result.unread and not result.cells:
+        ports: Mapping[str, str] = report.get("test_ports", {})
+        result = prove_parts(gold, ports, job, result, lambda part: prove(part, progress))
+    return Proved(gold.top, result, (*gate.warnings, *_changed(gold, report)))
 
 
 def prove_rtl(arguments: tuple[str, ...], limits: Limits, progress: Progress) -> Proved:

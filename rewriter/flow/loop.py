@@ -11,6 +11,7 @@ from rewriter.edit.cells import render_cells
 from rewriter.flow.checks import check, judge, rewritten_source
 from rewriter.flow.evidence import pair, rejected, rejection_warnings, waived
 from rewriter.flow.job import Job, Progress, StopWatch
+from rewriter.flow.parts import prove_parts
 from rewriter.methods import METHODS
 from rewriter.model.cells import FILES
 from rewriter.model.design import Design, Edge
@@ -129,6 +130,8 @@ def _proved(run: Run, done: Rewrite, job: Job, watch: StopWatch) -> Run:
     )
     with watch.stage("prove", "proving"):
         result = prove(work, watch.progress)
+        if result.unread and not result.cells:
+            result = prove_parts(run.design, done.test_ports, work, result, lambda part: prove(part, watch.progress))
     return replace(run, proof=result, evidence=pair(run.design, done, result))
 
 
