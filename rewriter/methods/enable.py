@@ -11,6 +11,7 @@ from rewriter.analysis.existing import gated_by, gated_clocks
 from rewriter.analysis.registers import Group, groups, plain_scope
 from rewriter.analysis.temporaries import Temporaries, find
 from rewriter.analysis.wake import Wake, wake_of
+from rewriter.model.cells import WRAPPERS
 from rewriter.model.design import ClockedBlock, Design, Module
 from rewriter.model.plan import Anchor, BlockId, Liveness, Occurrence, Outcome, Part, Proposal, Refusal, RegisterId
 from rewriter.model.reasons import PAGES, Reason, Verdict
@@ -27,6 +28,8 @@ class Enable:
     def propose(self, module: Module, design: Design) -> tuple[Outcome, ...]:
         """Give an outcome for every register that the clocked blocks of a module body write."""
         definition = design.definitions[module.definition]
+        if definition.name in WRAPPERS.values():
+            return ()  # a cell of ours, not a register of the user's
         gated = gated_clocks(design, definition)
         sources = Sources(design, module, gated)
         found: list[Outcome] = []
