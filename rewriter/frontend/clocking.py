@@ -15,6 +15,7 @@ from pyslang.ast import (
     ElementSelectExpression,
     Expression,
     ExpressionKind,
+    GenerateBlockSymbol,
     MemberAccessExpression,
     NamedValueExpression,
     NetSymbol,
@@ -130,7 +131,13 @@ class _DataReads:
 
     def found(self) -> Iterator[ValueExpressionBase]:
         """Give every such read."""
-        self._body.symbol.visit(lookup_table={ExpressionKind.NamedValue: self._read, SymbolKind.Instance: _skip})
+        self._body.symbol.visit(
+            lookup_table={
+                ExpressionKind.NamedValue: self._read,
+                SymbolKind.Instance: _skip,
+                SymbolKind.GenerateBlock: _taken,
+            }
+        )
         if self._remaining():  # most clocks are only events; only the others are worth a closer look
             self._body.symbol.visit(
                 lookup_table={
@@ -138,6 +145,7 @@ class _DataReads:
                     SymbolKind.ContinuousAssign: self._assign,
                     SymbolKind.Net: self._net,
                     SymbolKind.Instance: _skip,
+                    SymbolKind.GenerateBlock: _taken,
                 }
             )
         yield from self._remaining()
@@ -186,6 +194,11 @@ def _root(expression: Expression) -> Expression:
     while isinstance(expression, (ElementSelectExpression, RangeSelectExpression, MemberAccessExpression)):
         expression = expression.value
     return expression
+
+
+def _taken(branch: GenerateBlockSymbol) -> VisitAction:
+    """Leave out branches that are not taken: there is nothing in them."""
+    return VisitAction.Skip if branch.isUninstantiated else VisitAction.Advance
 
 
 def _skip(_: object) -> VisitAction:
