@@ -42,17 +42,7 @@ from rewriter.frontend.bits import extent, integer
 from rewriter.frontend.calls import Calls
 from rewriter.frontend.names import Names, is_local, is_parameter
 from rewriter.frontend.places import Locator
-from rewriter.model.expr import (
-    Call,
-    Concatenation,
-    Conditional,
-    Constant,
-    Expr,
-    Opaque,
-    Operation,
-    Reference,
-    Select,
-)
+from rewriter.model.expr import Call, Concatenation, Conditional, Constant, Expr, Opaque, Operation, Reference, Select
 from rewriter.model.source import Span
 
 _UNARY = {
