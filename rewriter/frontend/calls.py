@@ -11,9 +11,13 @@ from pyslang.ast import (
     AssignmentExpression,
     BlockStatement,
     CallExpression,
+    ConcurrentAssertionStatement,
     EmptyStatement,
     Expression,
     ExpressionKind,
+    ExpressionStatement,
+    ImmediateAssertionStatement,
+    Statement,
     StatementKind,
     StatementList,
     SubroutineSymbol,
@@ -57,6 +61,21 @@ _PURE_SYSTEM = frozenset(
         "$floor",
         "$ceil",
     )
+)
+
+# IEEE 1800-2017 clause 21: they print, and write no variable
+_PRINTING = (
+    "$display",
+    "$write",
+    "$strobe",
+    "$monitor",
+    "$fdisplay",
+    "$fwrite",
+    "$fstrobe",
+    "$fmonitor",
+    "$info",
+    "$warning",
+    "$error",
 )
 
 STEPS = {
@@ -148,3 +167,13 @@ class Calls:
 def _is_hidden(symbol: Symbol, subroutine: SubroutineSymbol) -> bool:
     """Say whether a symbol is neither fixed nor declared inside a subroutine."""
     return not is_parameter(symbol) and not symbol.hierarchicalPath.startswith(f"{subroutine.hierarchicalPath}.")
+
+
+def describe(statement: Statement) -> tuple[str, bool]:
+    """Name a statement for a message, and say whether it is known to write nothing."""
+    if isinstance(statement, ExpressionStatement) and isinstance(statement.expr, CallExpression):
+        name = statement.expr.subroutineName
+        return f"call of {name}", name.startswith(_PRINTING)
+    if isinstance(statement, (ImmediateAssertionStatement, ConcurrentAssertionStatement)):
+        return "assertion", True
+    return f"{statement.kind.name} statement", False

@@ -14,7 +14,6 @@ from pyslang.ast import (
     CallExpression,
     CaseStatement,
     CaseStatementCondition,
-    ConcurrentAssertionStatement,
     ConditionalStatement,
     DelayControl,
     EmptyStatement,
@@ -23,7 +22,6 @@ from pyslang.ast import (
     ExpressionStatement,
     ForeachLoopStatement,
     ForLoopStatement,
-    ImmediateAssertionStatement,
     RepeatLoopStatement,
     StatementBlockKind,
     StatementList,
@@ -44,7 +42,7 @@ from pyslang.syntax import (
     SyntaxNode,
 )
 
-from rewriter.frontend.calls import STEPS
+from rewriter.frontend.calls import STEPS, describe
 from rewriter.frontend.expressions import Expressions, names_in
 from rewriter.frontend.places import Locator
 from rewriter.frontend.targets import targets_of
@@ -63,21 +61,6 @@ from rewriter.model.statement import (
     Opaque,
     Statement,
     Target,
-)
-
-# IEEE 1800-2017 clause 21: they print, and write no variable
-_PRINTING = (
-    "$display",
-    "$write",
-    "$strobe",
-    "$monitor",
-    "$fdisplay",
-    "$fwrite",
-    "$fstrobe",
-    "$fmonitor",
-    "$info",
-    "$warning",
-    "$error",
 )
 
 
@@ -372,7 +355,7 @@ class Statements:
 
     def _opaque(self, statement: Bound) -> Statement:
         span = self._span(statement)
-        what, harmless = _describe(statement)
+        what, harmless = describe(statement)
         if statement.kind.name in ("Timed", "Wait", "WaitFork", "WaitOrder"):
             self.trap("timing-control", span)
         names = self._expressions.names
@@ -386,16 +369,6 @@ class Statements:
         for write in writes:
             found += targets_of(write.left, self._expressions, self._locator, self._loops) or ()
         return tuple(found)
-
-
-def _describe(statement: Bound) -> tuple[str, bool]:
-    """Name a statement for a message, and say whether it is known to write nothing."""
-    if isinstance(statement, ExpressionStatement) and isinstance(statement.expr, CallExpression):
-        name = statement.expr.subroutineName
-        return f"call of {name}", name.startswith(_PRINTING)
-    if isinstance(statement, (ImmediateAssertionStatement, ConcurrentAssertionStatement)):
-        return "assertion", True
-    return f"{statement.kind.name} statement", False
 
 
 def _text(token: Token | None) -> str:

@@ -332,13 +332,6 @@ def test_banks_of_one_condition_share_a_cell(tmp_path: Path) -> None:
     done.compile()
 
 
-def test_an_include_file_that_is_read_once_is_edited(tmp_path: Path) -> None:
-    (tmp_path / "body.svh").write_text("    always_ff @(posedge clk) if (en) q <= d;\n")
-    done = rewrite_files(tmp_path, {"m.sv": f'{HEAD}`include "body.svh"\nendmodule\n'})
-    assert "always_ff @(posedge gclk_q) if (en) q <= d;\n" in done.text("body.svh")
-    done.again()
-
-
 def test_macro_text_stays_with_what_stays(tmp_path: Path) -> None:
     body = (
         "    always_ff @(posedge clk) begin\n"
@@ -377,14 +370,6 @@ def test_a_loop_is_copied_with_its_variable(tmp_path: Path) -> None:
         in inside(done)
     ) or ("integer i_t;" in inside(done))
     done.compile()
-
-
-def test_generated_files_are_named_in_a_warning(tmp_path: Path) -> None:
-    text = f"// this file was automatically generated\n{HEAD}    always_ff @(posedge clk) if (en) q <= d;\nendmodule\n"
-    done = rewrite_files(tmp_path, {"m.sv": text})
-    (warning,) = done.rewrite.warnings
-    assert warning.place == str(tmp_path / "m.sv")
-    assert "generated" in warning.message
 
 
 def test_a_choice_of_the_old_value_wakes_by_its_condition(tmp_path: Path) -> None:
